@@ -1,0 +1,249 @@
+"""Net pressure against elevation as a sum of steps and ramps, and its integrals, for n states at once.
+
+    p(z) = Σ s ⟨k − z⟩⁰ + g ⟨k − z⟩¹          k knot, s step, g slope with depth
+    V(z) = Σ s ⟨k − z⟩¹ + g ⟨k − z⟩²/2        force per metre of width above z
+    M(z) = Σ s ⟨k − z⟩²/2 + g ⟨k − z⟩³/6      moment about z of everything above z
+    N(z) = Σ s ⟨k − z⟩³/6 + g ⟨k − z⟩⁴/24     its integral, for faces whose width varies
+
+⟨x⟩ʲ is the Macaulay bracket of beam theory: xʲ for x > 0, else nothing.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+from dataclasses import dataclass
+from math import factorial
+
+import numpy as np
+
+from loads.arrays import FloatArray
+
+_BLOCK_ELEMENTS = 32_768
+"""States are taken in blocks of about this many values, which stay in a core's cache."""
+
+
+@dataclass(frozen=True, kw_only=True)
+class Diagram:
+    """A pressure diagram of n states with k terms.
+
+    Attributes
+    ----------
+    knot
+        Elevation at which each term starts, shape (n, k). [m]
+    step
+        Pressure that sets in at the knot, shape (n, k). [Pa]
+    slope
+        Growth of pressure with depth below the knot, shape (n, k). [N/m³]
+    """
+
+    knot: FloatArray
+    step: FloatArray
+    slope: FloatArray
+
+    @classmethod
+    def of_terms(cls, states: int, terms: Iterable[tuple[FloatArray | float, ...]]) -> Diagram:
+        """Build a diagram from (knot, step, slope) terms, each entry a number or an array of shape (n,)."""
+        columns = [[np.broadcast_to(np.asarray(entry, float), (states,)) for entry in term] for term in terms]
+        if not columns:
+            empty = np.zeros((states, 0))
+            return cls(knot=empty, step=empty, slope=empty)
+        knot, step, slope = (np.column_stack([column[i] for column in columns]) for i in range(3))
+        return cls(knot=knot, step=step, slope=slope)
+
+    @property
+    def states(self) -> int:
+        """Number of states n."""
+        return int(self.knot.shape[0])
+
+    def __add__(self, other: Diagram) -> Diagram:
+        """Join the terms: the diagram of both loads together."""
+        return Diagram.joined([self, other])
+
+    @classmethod
+    def joined(cls, diagrams: Iterable[Diagram]) -> Diagram:
+        """Join the terms of several diagrams of the same states."""
+        listed = list(diagrams)
+        return cls(
+            knot=np.concatenate([d.knot for d in listed], axis=1),
+            step=np.concatenate([d.step for d in listed], axis=1),
+            slope=np.concatenate([d.slope for d in listed], axis=1),
+        )
+
+    def scaled(self, factor: float) -> Diagram:
+        """Return the diagram times a number; −1 turns a push toward the flood side around."""
+        return Diagram(knot=self.knot, step=factor * self.step, slope=factor * self.slope)
+
+    def take(self, index: int) -> Diagram:
+        """Return one state as a diagram with n = 1."""
+        rows = slice(index, index + 1)
+        return Diagram(knot=self.knot[rows], step=self.step[rows], slope=self.slope[rows])
+
+    def pressure(self, z: FloatArray, *, at_underside: bool = False) -> FloatArray:
+        """Pressure at elevations.
+
+        Parameters
+        ----------
+        z
+            Elevations, shape (m,) or (n, m). [m]
+        at_underside
+            Where the diagram jumps, the value just below z instead of just above it.
+
+        Returns
+        -------
+        FloatArray
+            Shape (n, m). [Pa]
+        """
+        points = np.atleast_2d(z)
+        total = np.zeros((self.states, points.shape[1]))
+        for k in range(self.knot.shape[1]):
+            depth = self.knot[:, k, None] - points
+            reached = depth >= 0 if at_underside else depth > 0
+            total += np.where(
+                reached, self.step[:, k, None] + self.slope[:, k, None] * np.maximum(depth, 0), 0
+            )
+        return total
+
+    def shear(self, z: FloatArray) -> FloatArray:
+        """V, force per metre of width of everything above z, shape (n, m). [N/m]."""
+        return self._integral(z, 1)
+
+    def moment(self, z: FloatArray) -> FloatArray:
+        """M, moment per metre of width about z of everything above z, shape (n, m). [N·m/m]."""
+        return self._integral(z, 2)
+
+    def moment_integral(self, z: FloatArray) -> FloatArray:
+        """N, integral of M above z, shape (n, m). [N·m]."""
+        return self._integral(z, 3)
+
+    def _integral(self, z: FloatArray, order: int) -> FloatArray:
+        points = np.atleast_2d(z)
+        total = np.zeros((self.states, points.shape[1]))
+        for k in range(self.knot.shape[1]):
+            depth = np.maximum(self.knot[:, k, None] - points, 0)
+            power = depth if order == 1 else depth**order
+            ramp = (self.slope[:, k, None] / factorial(order + 1)) * depth
+            total += power * (self.step[:, k, None] / factorial(order) + ramp)
+        return total
+
+    def stacked(self, edges: FloatArray) -> tuple[FloatArray, FloatArray]:
+        """Force and moment of strips that lie edge to edge, such as the logs of a stack.
+
+        Parameters
+        ----------
+        edges
+            Elevations of the m + 1 edges from the bottom up, shape (m + 1,). [m]
+
+        Returns
+        -------
+        tuple of FloatArray
+            Force per metre of width [N/m] and moment about the strip's own lower edge [N·m/m], each (n, m).
+
+        Notes
+        -----
+        F = V(a) − V(b), M = M(a) − M(b) − (b − a)·V(b). Every edge is evaluated once for both strips at it.
+        """
+        count = len(edges)
+        force = np.empty((self.states, count - 1))
+        moment = np.empty((self.states, count - 1))
+        height = np.diff(edges)
+        rows = max(1, _BLOCK_ELEMENTS // count)
+        for start in range(0, self.states, rows):
+            block = slice(start, min(start + rows, self.states))
+            shear, about = self._shear_and_moment(edges, block)
+            np.subtract(shear[:, :-1], shear[:, 1:], out=force[block])
+            np.multiply(shear[:, 1:], height, out=shear[:, 1:])
+            part = moment[block]
+            np.subtract(about[:, :-1], about[:, 1:], out=part)
+            part -= shear[:, 1:]
+        return force, moment
+
+    def _shear_and_moment(self, edges: FloatArray, block: slice) -> tuple[FloatArray, FloatArray]:
+        knot, step, slope = self.knot[block], self.step[block], self.slope[block]
+        shape = (knot.shape[0], len(edges))
+        shear, about, depth, work = np.zeros(shape), np.zeros(shape), np.empty(shape), np.empty(shape)
+        stepped = step.any(axis=0)
+        for k in range(knot.shape[1]):
+            np.subtract(knot[:, k, None], edges, out=depth)
+            np.maximum(depth, 0, out=depth)
+            np.multiply(depth, slope[:, k, None] / 2, out=work)
+            if stepped[k]:
+                work += step[:, k, None]
+            work *= depth
+            shear += work
+            if stepped[k]:
+                np.multiply(depth, slope[:, k, None] / 6, out=work)
+                work += step[:, k, None] / 2
+                work *= depth
+            else:
+                work /= 3
+            work *= depth
+            about += work
+        return shear, about
+
+    def strips(self, low: FloatArray, high: FloatArray) -> tuple[FloatArray, FloatArray, FloatArray]:
+        """Zeroth, first and second moment of the pressure over strips, without loss of digits.
+
+        Parameters
+        ----------
+        low, high
+            Elevations of the strips' ends, shape (m,) or (n, m). [m]
+
+        Returns
+        -------
+        tuple of FloatArray
+            ∫p dz [N/m], ∫p (z − low) dz [N·m/m] and ∫p (z − low)² dz [N·m], each of shape (n, m).
+
+        Notes
+        -----
+        Within a strip a term that starts above it is a step and a ramp that start at its upper end, so no
+        large numbers are subtracted from one another.
+        """
+        low, high = np.atleast_2d(low), np.atleast_2d(high)
+        shape = (self.states, low.shape[1])
+        zeroth, first, second = np.zeros(shape), np.zeros(shape), np.zeros(shape)
+        for k in range(self.knot.shape[1]):
+            knot, slope = self.knot[:, k, None], self.slope[:, k, None]
+            above = np.maximum(knot - high, 0)
+            depth = np.maximum(np.minimum(knot, high) - low, 0)
+            step = self.step[:, k, None] + slope * above
+            zeroth += depth * (step + slope * depth / 2)
+            first += depth**2 * (step / 2 + slope * depth / 6)
+            second += depth**3 * (step / 3 + slope * depth / 12)
+        return zeroth, first, second
+
+    def gross(self, z: float) -> FloatArray:
+        """Sum of all terms' magnitudes at an elevation, the scale against which a sum may count as nil, (n,). [Pa]."""
+        depth = np.maximum(self.knot - z, 0)
+        return ((np.abs(self.step) + np.abs(self.slope) * depth) * (depth > 0)).sum(axis=1)
+
+    def below(self, top: float) -> Diagram:
+        """Return the diagram cut off at an elevation: the same below it, nothing above it."""
+        above = np.maximum(self.knot - top, 0)
+        return Diagram(knot=np.minimum(self.knot, top), step=self.step + self.slope * above, slope=self.slope)
+
+    def extremes(self, bottom: float, top: float) -> tuple[FloatArray, FloatArray]:
+        """Greatest and least pressure between two elevations, each of shape (n,). [Pa]."""
+        knots = np.clip(self.knot, bottom, top)
+        inside = np.concatenate(
+            [np.full((self.states, 1), bottom), knots, np.full((self.states, 1), top)], axis=1
+        )
+        over = self.pressure(inside)
+        under = self.pressure(inside, at_underside=True)
+        over = np.where(inside < top, over, under)
+        under = np.where(inside > bottom, under, over)
+        both = np.concatenate([over, under], axis=1)
+        return both.max(axis=1), both.min(axis=1)
+
+    def rows(self, bottom: float, top: float, index: int = 0) -> list[tuple[float, float]]:
+        """Corners of one state's diagram between two elevations, (z, p) from the bottom up, two rows at a jump."""
+        one = self.take(index)
+        inside = one.knot[0][(one.knot[0] > bottom) & (one.knot[0] < top)]
+        levels = np.unique(np.concatenate([[bottom, top], inside]))
+        over, under = one.pressure(levels)[0], one.pressure(levels, at_underside=True)[0]
+        rows: list[tuple[float, float]] = []
+        for z, p_over, p_under in zip(levels, over, under, strict=True):
+            if z > bottom:
+                rows.append((float(z), float(p_under)))
+            if z < top and (z == bottom or abs(p_over - p_under) > 1e-9 * max(abs(p_over), abs(p_under))):
+                rows.append((float(z), float(p_over)))
+        return rows

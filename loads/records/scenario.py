@@ -1,0 +1,145 @@
+"""The scenario: datum, water and everything that stands on the flood line."""
+
+from __future__ import annotations
+
+import re
+from datetime import datetime
+from typing import Annotated, Any, Literal
+
+from pydantic import Field, field_validator, model_validator
+
+from loads.quantity import Quantity
+from loads.records.base import Measure, Name, Note, Record, problem_error, several_problems
+from loads.records.panel import Elevation, Panel
+
+FORMAT = 1
+"""Version of the scenario format that this program writes; it reads every version up to it."""
+
+Fluid = Literal["fresh", "sea", "custom"]
+UnitWeight = Annotated[
+    Quantity,
+    Measure(
+        kind="unit weight",
+        meaning="Unit weight of the water, entered directly",
+        least="50 pcf",
+        most="120 pcf",
+        example="62.4 pcf",
+    ),
+]
+Temperature = Annotated[
+    Quantity,
+    Measure(
+        kind="temperature",
+        meaning="Water temperature",
+        least="-2 degC",
+        most="40 degC",
+        example="50 degF",
+    ),
+]
+Salinity = Annotated[float, Field(ge=0, le=42, allow_inf_nan=False)]
+SuspendedSediment = Annotated[
+    Quantity,
+    Measure(
+        kind="density",
+        meaning="Mass of suspended sediment per volume of mixture",
+        least="0 kg/m3",
+        most="600 kg/m3",
+    ),
+]
+
+
+class Water(Record):
+    """Still-water levels on both sides and what the water is."""
+
+    flood_side: Elevation
+    protected_side: Elevation | None = None
+    as_of: datetime | None = None
+    fluid: Fluid = "fresh"
+    temperature: Temperature | None = None
+    salinity: Salinity | None = None
+    suspended_sediment: SuspendedSediment | None = None
+    unit_weight: UnitWeight | None = None
+    protected_fluid: Fluid | None = None
+    protected_temperature: Temperature | None = None
+    protected_salinity: Salinity | None = None
+    protected_suspended_sediment: SuspendedSediment | None = None
+    protected_unit_weight: UnitWeight | None = None
+
+    @field_validator("as_of", mode="before")
+    @classmethod
+    def _time_has_a_zone(cls, value: object) -> object:
+        if isinstance(value, str):
+            try:
+                value = datetime.fromisoformat(value)
+            except ValueError:
+                raise problem_error(
+                    "is no date and time; write for example 2031-04-02T06:00:00-05:00"
+                ) from None
+        if isinstance(value, datetime) and value.tzinfo is None:
+            raise problem_error("needs a time zone, for example 2031-04-02T06:00:00-05:00")
+        return value
+
+    @model_validator(mode="after")
+    def _custom_has_a_weight(self) -> Water:
+        problems = []
+        for prefix, fluid in (("", self.fluid), ("protected_", self.protected_fluid)):
+            weight = getattr(self, f"{prefix}unit_weight")
+            if fluid == "custom" and weight is None:
+                problems.append(
+                    (f"{prefix}unit_weight", "", 'is missing; fluid "custom" needs it, for example "64 pcf"')
+                )
+            for name in ("temperature", "salinity", "suspended_sediment"):
+                given = getattr(self, f"{prefix}{name}") is not None
+                if given and (weight is not None or fluid == "custom"):
+                    rule = (
+                        "would not be used, because a unit weight is entered directly; leave one of them out"
+                    )
+                    problems.append((f"{prefix}{name}", "given", rule))
+            if getattr(self, f"{prefix}salinity") is not None and (fluid or self.fluid) == "fresh":
+                problems.append(
+                    (f"{prefix}salinity", "given", 'is for fluid "sea"; leave it out or say "sea"')
+                )
+        described = ("temperature", "salinity", "suspended_sediment")
+        own = any(getattr(self, f"protected_{name}") is not None for name in described)
+        if self.fluid == "custom" and self.protected_fluid is None and own:
+            rule = 'is missing; with fluid "custom" on the flood side say what the water here is'
+            problems.append(("protected_fluid", "", rule))
+        if problems:
+            raise several_problems(problems)
+        return self
+
+
+class Scenario(Record):
+    """One flood line with the water on both sides of it."""
+
+    format: Annotated[int, Field(ge=1, le=FORMAT)]
+    title: Annotated[Name, Field(min_length=1)]
+    location: Name = ""
+    purpose: Note = ""
+    author: Name = ""
+    revision: Name = ""
+    status: Literal["draft", "screening", "for review"] = "screening"
+    datum: Annotated[Name, Field(min_length=1)]
+    units: Literal["US", "SI"] = "US"
+    near_limit: Annotated[float, Field(ge=0.5, lt=1, allow_inf_nan=False)] = 0.9
+    water: Water
+    panel: Annotated[tuple[Panel, ...], Field(max_length=500)]
+
+    @field_validator("panel", mode="before")
+    @classmethod
+    def _list_becomes_tuple(cls, value: object) -> object:
+        return tuple(value) if isinstance(value, list) else value
+
+
+def scenario_schema() -> dict[str, Any]:
+    """JSON schema of the scenario format."""
+    schema = Scenario.model_json_schema()
+    schema["$schema"] = "https://json-schema.org/draft/2020-12/schema"
+    schema["title"] = "Sillhead scenario, format 1"
+    return schema
+
+
+def zone_name(moment: datetime) -> str:
+    """Offset of a time as people write it, for example UTC−05:00."""
+    offset = moment.strftime("%z")
+    return "UTC" if re.fullmatch(r"[+-]0000", offset) else f"UTC{offset[:3]}:{offset[3:]}".replace("-", "−")

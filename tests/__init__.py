@@ -1,0 +1,1 @@
+"""Tests of Sillhead: literature, reference libraries, laws, pages."""

@@ -1,0 +1,1 @@
+"""Pages, figures, links, print and command line of Sillhead."""

@@ -1,0 +1,207 @@
+"""The answer as data: the JSON of a check, and a scenario text with levels overridden."""
+
+from __future__ import annotations
+
+import copy
+import math
+from collections.abc import Mapping
+from typing import Any
+
+from loads import __version__
+from loads.assessment import Assessed, Assessment, Barrier, assess
+from loads.cautions import CAUTIONS
+from loads.checks import Check
+from loads.document import input_digest
+from loads.faces import Resultant
+from loads.records.base import read_date
+from loads.scenario_file import Document, parse_document, scenario_of
+from loads.states import Levels
+from loads.units import SI_UNITS
+from loads.working import Term, working
+
+SCHEMA = "sillhead/1"
+
+
+def with_levels(document: Document, overrides: Mapping[str, str]) -> Document:
+    """Copy of a document with typed levels in place of its own.
+
+    Parameters
+    ----------
+    document
+        As read.
+    overrides
+        "flood_side" and "protected_side" with what was typed; "dry" empties the protected side.
+    """
+    changed = copy.deepcopy(document)
+    water = changed.get("water")
+    if not isinstance(water, dict):
+        return changed
+    for side, text in overrides.items():
+        if side == "protected_side" and text.strip().lower() == "dry":
+            water.pop(side, None)
+        else:
+            water[side] = text
+        water.pop("as_of", None)
+    return changed
+
+
+def check_json(text: str, overrides: Mapping[str, str]) -> dict[str, Any]:
+    """Answer to a scenario text.
+
+    Parameters
+    ----------
+    text
+        TOML.
+    overrides
+        As in `with_levels`.
+
+    Raises
+    ------
+    ScenarioError
+        With every problem.
+    """
+    document = with_levels(parse_document(text.encode()), overrides)
+    return answer(assess(scenario_of(document)), document)
+
+
+def answer(assessment: Assessment, document: Mapping[str, object], index: int = 0) -> dict[str, Any]:
+    """JSON of one state of an assessment, SI base units, keys that are never renamed.
+
+    Parameters
+    ----------
+    assessment
+        What was computed.
+    document
+        The document it was computed from, for its digest.
+    index
+        Which state.
+    """
+    return {
+        "schema": SCHEMA,
+        "version": __version__,
+        "input_digest": input_digest(document),
+        "title": assessment.scenario.title,
+        "datum": assessment.scenario.datum,
+        "fluids": {
+            side: {"unit_weight": fluid.unit_weight, "basis": fluid.basis}
+            for side, fluid in assessment.fluids.items()
+        },
+        "barriers": [_barrier(barrier, index) for barrier in assessment.barriers],
+        "cautions": list(CAUTIONS),
+    }
+
+
+def _barrier(barrier: Barrier, index: int) -> dict[str, Any]:
+    head = {
+        "id": barrier.panel.id,
+        "kind": "panel",
+        "name": barrier.panel.name,
+        "verdict": barrier.verdict(index),
+        "levels": _levels(barrier.setting.levels, index),
+        "rated_level": _rated_level(barrier),
+    }
+    if not isinstance(barrier, Assessed):
+        disagreement = {
+            "agrees": False,
+            "largest_difference": barrier.difference,
+            "first": {"horizontal": barrier.first[0], "moment": barrier.first[1]},
+            "second": {"horizontal": barrier.second[0], "moment": barrier.second[1]},
+        }
+        nothing: dict[str, Any] = {"diagram": [], "parts": [], "checks": [], "first_limit": None, "remarks": []}
+        return {**head, "load": None, "recheck": disagreement, **nothing}
+    face, found = barrier.face, barrier.resultant
+    rows = barrier.diagram.rows(face.bottom, face.top, index)
+    return {
+        **head,
+        "load": {
+            **_resultant(found, index),
+            "about": {"x": 0.0, "z": face.bottom},
+            "line_of_action": _number(found.line_of_action[index]),
+            "by_load": {
+                name: {"horizontal": float(part.horizontal[index]), "moment": float(part.moment[index])}
+                for name, part in barrier.by_load.items()
+            },
+        },
+        "diagram": [{"z": z, "pressure": pressure} for z, pressure in rows],
+        "recheck": {
+            "agrees": bool(barrier.recheck.agrees[index]),
+            "largest_difference": float(barrier.recheck.difference[index]),
+        },
+        "parts": [],
+        "checks": [_check(check, index) for check in barrier.checks],
+        "first_limit": _first_limit(barrier),
+        "working": [
+            {
+                "title": step.title,
+                "formula": step.formula,
+                "terms": [_term(term) for term in step.terms],
+                "results": [_term(term) for term in step.results],
+            }
+            for step in working(barrier, index)
+        ],
+        "remarks": list(barrier.remarks),
+    }
+
+
+def _levels(levels: Levels, index: int) -> dict[str, float | None]:
+    return {f"{side}_side": _number(levels.of(side)[index]) for side in ("flood", "protected")}
+
+
+def _rated_level(barrier: Barrier) -> dict[str, Any] | None:
+    rated = barrier.panel.rated_level
+    if rated is None:
+        return None
+    day = read_date(rated.dated)
+    return {"level": rated.value, "source": rated.source, "date": day.isoformat() if day else None}
+
+
+def _resultant(found: Resultant, index: int) -> dict[str, float]:
+    return {
+        "horizontal": float(found.horizontal[index]),
+        "vertical": float(found.vertical[index]),
+        "normal": float(found.total[index]),
+        "moment": float(found.moment[index]),
+    }
+
+
+def _check(check: Check, index: int) -> dict[str, Any]:
+    kind = "length" if check.kind == "elevation" else check.kind
+    return {
+        "subject": check.subject,
+        "check": check.name,
+        "demand": float(check.demand[index]),
+        "limit": _number(check.limit_value),
+        "unit": SI_UNITS[kind],
+        "ratio": _number(check.ratio[index]),
+        "verdict": check.verdict(index),
+        "source": check.source,
+        "remarks": list(check.remarks),
+    }
+
+
+def _term(term: Term) -> dict[str, Any]:
+    kind = "length" if term.kind == "elevation" else term.kind
+    return {
+        "symbol": term.symbol,
+        "meaning": term.meaning,
+        "value": _number(term.value),
+        "unit": SI_UNITS.get(kind, ""),
+    }
+
+
+def _first_limit(barrier: Assessed) -> dict[str, Any] | None:
+    first = barrier.first_limit
+    if first is None:
+        return None
+    return {
+        "level": first.level,
+        "subject": first.subject,
+        "check": first.check,
+        "without_water": first.without_water,
+        "searched_to": first.ceiling,
+    }
+
+
+def _number(value: float) -> float | None:
+    number = float(value)
+    return number if math.isfinite(number) else None

@@ -1,0 +1,193 @@
+"""How values are written for people: unit by unit system, significant figures, one definition for all outputs."""
+
+from __future__ import annotations
+
+import math
+from dataclasses import dataclass
+from typing import Literal
+
+from loads.quantity import Quantity
+from loads.records.scenario import Scenario
+from loads.units import from_si, to_si
+
+System = Literal["US", "SI"]
+
+NO_BREAK = "\u00a0"
+THOUSANDS = "\u202f"
+MINUS = "\u2212"
+PAGE_DIGITS = 3
+"""Significant figures on pages."""
+PRINT_DIGITS = 6
+"""Significant figures in working that a reviewer follows by hand."""
+
+
+@dataclass(frozen=True, kw_only=True)
+class Choice:
+    """Unit in which a kind is shown, and the larger unit taken from a certain size on."""
+
+    unit: str
+    label: str
+    kind: str
+    larger: str = ""
+    larger_label: str = ""
+    from_size: float = math.inf
+
+
+_POWERS = {"area": (2, "²"), "first moment of area": (3, "³"), "second moment of area": (4, "⁴")}
+
+
+def _choice(kind: str, unit: str, label: str = "", larger: str = "", size: float = math.inf) -> Choice:
+    return Choice(
+        unit=unit, label=label or unit, kind=kind, larger=larger, larger_label=larger, from_size=size
+    )
+
+
+CHOICES: dict[System, dict[str, Choice]] = {
+    "US": {
+        "length": _choice("length", "ft"),
+        "elevation": _choice("length", "ft"),
+        "pressure": _choice("pressure", "psf"),
+        "unit weight": _choice("unit weight", "pcf"),
+        "force": _choice("force", "lb", larger="kip", size=10_000.0),
+        "line load": _choice("line load", "lb/ft"),
+        "moment": _choice("moment", "lb·ft", larger="kip·ft", size=10_000.0),
+        "moment per length": _choice("moment per length", "lb·ft/ft"),
+        "angle": _choice("angle", "deg", "°"),
+        "temperature": _choice("temperature", "degF", "°F"),
+        "density": _choice("density", "kg/m3", "kg/m³"),
+        "speed": _choice("speed", "ft/s"),
+    },
+    "SI": {
+        "length": _choice("length", "m"),
+        "elevation": _choice("length", "m"),
+        "pressure": _choice("pressure", "kPa"),
+        "unit weight": _choice("unit weight", "kN/m3", "kN/m³"),
+        "force": _choice("force", "kN"),
+        "line load": _choice("line load", "kN/m"),
+        "moment": _choice("moment", "kN·m"),
+        "moment per length": _choice("moment per length", "kN·m/m"),
+        "angle": _choice("angle", "deg", "°"),
+        "temperature": _choice("temperature", "degC", "°C"),
+        "density": _choice("density", "kg/m3", "kg/m³"),
+        "speed": _choice("speed", "m/s"),
+    },
+}
+
+
+def significant(value: float, digits: int) -> str:
+    """Write a number with so many significant figures, never in powers of ten, thousands set apart.
+
+    Examples
+    --------
+    >>> significant(1268.4, 3).replace(THOUSANDS, " ")
+    '1 270'
+    >>> significant(0.04567, 3)
+    '0.0457'
+    """
+    if not math.isfinite(value):
+        return "–"
+    if value == 0 or abs(value) < 1e-12:
+        return "0"
+    decimals = digits - 1 - math.floor(math.log10(abs(value)))
+    rounded = round(value, decimals)
+    if rounded != 0:
+        decimals = digits - 1 - math.floor(math.log10(abs(rounded)))
+    return fixed(rounded, max(decimals, 0))
+
+
+def fixed(value: float, decimals: int) -> str:
+    """Write a number with so many decimals, thousands set apart, a true minus sign."""
+    text = f"{abs(value):,.{decimals}f}".replace(",", THOUSANDS)
+    negative = value < 0 and float(f"{abs(value):.{decimals}f}") != 0
+    return MINUS + text if negative else text
+
+
+def in_unit(value: float, kind: str, system: System) -> float:
+    """Return the number in the unit in which its kind is shown, never the larger one."""
+    choice = CHOICES[system][kind]
+    return from_si(value, choice.unit, choice.kind)
+
+
+def unit_label(kind: str, system: System) -> str:
+    """Label of the unit in which a kind is shown."""
+    return CHOICES[system][kind].label
+
+
+def show(value: float, kind: str, system: System, digits: int = PAGE_DIGITS) -> str:
+    """Value with its unit.
+
+    Parameters
+    ----------
+    value
+        In the SI base unit of the kind.
+    kind
+        A kind of `CHOICES`; "elevation" has fixed decimals, "ratio" no unit.
+    system
+        "US" or "SI".
+    digits
+        Significant figures.
+
+    Examples
+    --------
+    >>> show(67948.9, "force", "US").replace(NO_BREAK, " ")
+    '15.3 kip'
+    """
+    if kind == "ratio":
+        return significant(value, digits)
+    if kind == "elevation":
+        return elevation(value, system)
+    if kind in _POWERS:
+        return _power(value, kind, system, digits)
+    choice = CHOICES[system][kind]
+    number, label = from_si(value, choice.unit, choice.kind), choice.label
+    if abs(number) >= choice.from_size:
+        number, label = from_si(value, choice.larger, choice.kind), choice.larger_label
+    joint = "" if label == "°" else NO_BREAK
+    return f"{significant(number, digits)}{joint}{label}"
+
+
+def _power(value: float, kind: str, system: System, digits: int) -> str:
+    """Area and moments of area: powers of the unit of length."""
+    power, mark = _POWERS[kind]
+    choice = CHOICES[system]["length"]
+    number = value / from_si_factor(choice) ** power
+    return f"{significant(number, digits)}{NO_BREAK}{choice.label}{mark}"
+
+
+def from_si_factor(choice: Choice) -> float:
+    """SI value of one unit of a choice."""
+    return to_si(1.0, choice.unit, choice.kind)
+
+
+def elevation(value: float, system: System, datum: str = "") -> str:
+    """Elevation with two decimals in feet and three in metres, and its datum when given; "dry" without water."""
+    if not math.isfinite(value):
+        return "dry"
+    decimals = 2 if system == "US" else 3
+    text = (
+        f"{fixed(in_unit(value, 'elevation', system), decimals)}{NO_BREAK}{unit_label('elevation', system)}"
+    )
+    return f"{text} {datum}" if datum else text
+
+
+def as_entered(quantity: Quantity) -> str:
+    """Value as typed, with its range when one was stated."""
+    if quantity.has_range:
+        return f"{quantity.text} ({quantity.low_text or '–'} to {quantity.high_text or '–'})"
+    return quantity.text
+
+
+def pedigree(quantity: Quantity) -> str:
+    """Source and date of a value, in words."""
+    words = quantity.source or "no source stated"
+    return f"{words}, {quantity.dated.isoformat()}" if quantity.dated else words
+
+
+def barrier_title(barrier_id: str, name: str) -> str:
+    """Id and name of a barrier as headings show it."""
+    return f"{barrier_id} · {name}" if name else barrier_id
+
+
+def system_of(scenario: Scenario) -> System:
+    """Unit system in which a scenario asks to be shown."""
+    return scenario.units

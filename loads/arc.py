@@ -5,6 +5,11 @@ from __future__ import annotations
 import math
 from dataclasses import dataclass
 
+import numpy as np
+
+from loads.arrays import FloatArray
+from loads.disc import between_chord_and_arc
+
 _SLACK = 1e-9
 
 
@@ -72,3 +77,31 @@ class ArcShape:
         """Position of the arc at a height above the bottom edge. [m]."""
         rise = height - self.centre_z
         return self.centre_x + self.bulge * math.sqrt(max(self.radius**2 - rise**2, 0.0))
+
+    def run_and_prism(self, height: FloatArray) -> tuple[FloatArray, FloatArray]:
+        """Position of the arc, and the area between it and the vertical through the bottom edge below a height.
+
+        Parameters
+        ----------
+        height
+            Above the bottom edge, from 0 to the arc's height, any shape. [m]
+
+        Returns
+        -------
+        tuple of FloatArray
+            x [m] and ∫x dy from the bottom edge up [m²], positive toward the protected side.
+
+        Notes
+        -----
+        x = ±y (2 y_c − y) / (√(R² − (y − y_c)²) + |x_c|); the area is that of the triangle under the chord and of
+        the segment between chord and arc. Neither loses digits on a nearly flat arc or near its bottom edge.
+        """
+        foot = max(-self.bulge * self.centre_x, 0.0)
+        reach = np.sqrt(np.maximum(self.radius**2 - (height - self.centre_z) ** 2, 0.0)) + foot
+        rising = height * (2 * self.centre_z - height)
+        run = self.bulge * np.where(reach > 0, rising / np.where(reach > 0, reach, 1.0), 0.0)
+        chord = np.hypot(height, run)
+        aside = np.abs(self.centre_x * height - self.centre_z * run) / np.where(chord > 0, chord, 1.0)
+        half_angle = np.arctan2(chord / 2, aside)
+        segment = self.radius**2 * np.where(chord > 0, between_chord_and_arc(half_angle), 0.0)
+        return run, height * run / 2 + self.bulge * segment

@@ -194,8 +194,8 @@ def _panel(setting: Setting, near: float) -> Barrier:
         horizontal=resultant.horizontal,
         vertical=resultant.vertical,
         moment=resultant.moment,
-        gross_force=diagram.gross(face.bottom) * face.area,
-        reach=face.top - face.bottom,
+        rounding_force=diagram.rounding(face.bottom) * face.area,
+        reach=face.length,
     )
     if not second.agrees.all():
         return _withheld(setting, resultant, second)
@@ -236,22 +236,18 @@ def peak_pressure(diagram: Diagram, face: Face) -> FloatArray:
     return np.where(greatest >= -least, greatest, least)
 
 
-def panel_checks(
-    setting: Setting, face: Face, diagram: Diagram, resultant: Resultant, near: float
-) -> list[Check]:
-    """Checks of a panel: pressure at a point, total force, moment, rated level and freeboard."""
-    panel = setting.panel
-    subject = f"panel {panel.id}"
+def load_checks(panel: Panel, pressure: FloatArray, resultant: Resultant, near: float) -> list[Check]:
+    """Checks of what presses on a panel: pressure at a point, total force and moment, each with its sign."""
     limits = panel.limits
     reverse = ("The load pushes toward the flood side; the limit was entered without a direction.",)
     entered = (
-        ("pressure at a point", "pressure", peak_pressure(diagram, face), limits.pressure),
+        ("pressure at a point", "pressure", pressure, limits.pressure),
         ("total force", "force", resultant.total, limits.force),
         ("moment about the bottom", "moment", resultant.moment, limits.moment),
     )
-    checks = [
+    return [
         check_of(
-            subject=subject,
+            subject=f"panel {panel.id}",
             name=name,
             kind=kind,
             demand=demand,
@@ -261,15 +257,27 @@ def panel_checks(
         )
         for name, kind, demand, limit in entered
     ]
+
+
+def panel_checks(
+    setting: Setting, face: Face, diagram: Diagram, resultant: Resultant, near: float
+) -> list[Check]:
+    """Checks of a panel: pressure at a point, total force, moment, rated level and freeboard."""
+    panel = setting.panel
+    checks = load_checks(panel, peak_pressure(diagram, face), resultant, near)
     level = setting.levels.flood_side
-    freeboard = limits.freeboard
+    freeboard = panel.limits.freeboard
     for name, limit, highest in (
-        ("rated level", panel.rated_level, panel.rated_level.value if panel.rated_level else np.nan),
+        (
+            "rated level",
+            panel.rated_level,
+            panel.rated_level.value if panel.rated_level else np.nan,
+        ),
         ("freeboard", freeboard, face.top - freeboard.value if freeboard else np.nan),
     ):
         checks.append(
             level_check(
-                subject=subject,
+                subject=f"panel {panel.id}",
                 name=name,
                 level=level,
                 bottom=face.bottom,
@@ -297,8 +305,9 @@ def first_limit_of(setting: Setting, face: Face, near: float) -> FirstLimit | No
         levels = rising(flood_side, protected if np.isfinite(protected) else DRY)
         swept = Setting(levels=levels, fluids=setting.fluids, panel=setting.panel)
         diagram = Diagram.joined(load.diagram for load in loads_on(swept))
-        found = panel_checks(swept, face, diagram, face.resultant(diagram), near)
-        return [check for check in found if check.rises_with_water and check.limit is not None]
+        greatest, _ = diagram.extremes(face.bottom, face.top)
+        found = load_checks(setting.panel, greatest, face.resultant(diagram), near)
+        return [check for check in found if check.limit is not None]
 
     def ratios(flood_side: FloatArray) -> FloatArray:
         return np.column_stack([check.demand / check.limit_value for check in checks_at(flood_side)])

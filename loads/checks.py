@@ -67,7 +67,7 @@ class Check:
         ratio = float(self.ratio[index])
         if ratio > 1 + _ROUNDING:
             return "above limit"
-        return "near limit" if ratio >= self.near else "below limit"
+        return "near limit" if ratio >= self.near - _ROUNDING else "below limit"
 
 
 def source_text(limit: Quantity | None) -> str:

@@ -18,8 +18,30 @@ import numpy as np
 
 from loads.arrays import FloatArray
 
+_ROUNDING = 1e-12
+_ELEVATION_ROUNDING = 4 * float(np.finfo(float).eps)
 _BLOCK_ELEMENTS = 32_768
 """States are taken in blocks of about this many values, which stay in a core's cache."""
+
+
+def _add_ramp(
+    total: FloatArray,
+    knot: FloatArray,
+    slope: FloatArray,
+    factor: FloatArray,
+    centre: FloatArray,
+    beyond: np.ufunc,
+) -> None:
+    """Add slope·factor·⟨knot − centre⟩ for every state and strip, block by block, slopes of one sign."""
+    rows = max(1, _BLOCK_ELEMENTS // len(centre))
+    right = np.stack([factor, -factor * centre])
+    left = np.stack([slope * knot, slope], axis=1)
+    room = np.empty((rows, len(centre)))
+    for start in range(0, len(knot), rows):
+        part = room[: len(left) - start]
+        np.matmul(left[start : start + rows], right, out=part)
+        beyond(part, 0, out=part)
+        total[start : start + rows] += part
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -72,6 +94,10 @@ class Diagram:
     def scaled(self, factor: float) -> Diagram:
         """Return the diagram times a number; −1 turns a push toward the flood side around."""
         return Diagram(knot=self.knot, step=factor * self.step, slope=factor * self.slope)
+
+    def raised(self, height: float) -> Diagram:
+        """Return the diagram shifted up by a height."""
+        return Diagram(knot=self.knot + height, step=self.step, slope=self.slope)
 
     def take(self, index: int) -> Diagram:
         """Return one state as a diagram with n = 1."""
@@ -140,45 +166,39 @@ class Diagram:
 
         Notes
         -----
-        F = V(a) − V(b), M = M(a) − M(b) − (b − a)·V(b). Every edge is evaluated once for both strips at it.
+        A ramp that starts above a strip gives F = g·h·(k − middle) and M = g·h²/2·(k − (a + 2h/3)), products of a
+        state's figures with a strip's; where these change sign the strip is dry. The one strip in which a ramp
+        starts is put right on its own. That is six array passes a ramp.
         """
-        count = len(edges)
-        force = np.empty((self.states, count - 1))
-        moment = np.empty((self.states, count - 1))
-        height = np.diff(edges)
-        rows = max(1, _BLOCK_ELEMENTS // count)
-        for start in range(0, self.states, rows):
-            block = slice(start, min(start + rows, self.states))
-            shear, about = self._shear_and_moment(edges, block)
-            np.subtract(shear[:, :-1], shear[:, 1:], out=force[block])
-            np.multiply(shear[:, 1:], height, out=shear[:, 1:])
-            part = moment[block]
-            np.subtract(about[:, :-1], about[:, 1:], out=part)
-            part -= shear[:, 1:]
+        low, high = edges[:-1], edges[1:]
+        height = high - low
+        force, moment = (np.zeros((self.states, len(height))) for _ in range(2))
+        centres = ((force, height, low + height / 2), (moment, height**2 / 2, low + 2 * height / 3))
+        for k in range(self.knot.shape[1]):
+            for slope, beyond in (
+                (np.maximum(self.slope[:, k], 0), np.maximum),
+                (np.minimum(self.slope[:, k], 0), np.minimum),
+            ):
+                if slope.any():
+                    for total, factor, centre in centres:
+                        _add_ramp(total, self.knot[:, k], slope, factor, centre, beyond)
+            self._mend_partial(k, edges, force, moment)
+        if self.step.any():
+            steps = Diagram(knot=self.knot, step=self.step, slope=np.zeros_like(self.slope))
+            zeroth, first, _ = steps.strips(low, high)
+            force += zeroth
+            moment += first
         return force, moment
 
-    def _shear_and_moment(self, edges: FloatArray, block: slice) -> tuple[FloatArray, FloatArray]:
-        knot, step, slope = self.knot[block], self.step[block], self.slope[block]
-        shape = (knot.shape[0], len(edges))
-        shear, about, depth, work = np.zeros(shape), np.zeros(shape), np.empty(shape), np.empty(shape)
-        stepped = step.any(axis=0)
-        for k in range(knot.shape[1]):
-            np.subtract(knot[:, k, None], edges, out=depth)
-            np.maximum(depth, 0, out=depth)
-            np.multiply(depth, slope[:, k, None] / 2, out=work)
-            if stepped[k]:
-                work += step[:, k, None]
-            work *= depth
-            shear += work
-            if stepped[k]:
-                np.multiply(depth, slope[:, k, None] / 6, out=work)
-                work += step[:, k, None] / 2
-                work *= depth
-            else:
-                work /= 3
-            work *= depth
-            about += work
-        return shear, about
+    def _mend_partial(self, k: int, edges: FloatArray, force: FloatArray, moment: FloatArray) -> None:
+        """Replace what `_add_ramp` gave to the strips within which a ramp starts."""
+        strip = np.searchsorted(edges, self.knot[:, k]) - 1
+        state = np.flatnonzero((strip >= 0) & (strip < len(edges) - 1))
+        strip = strip[state]
+        slope, depth = self.slope[state, k], self.knot[state, k] - edges[strip]
+        height = edges[strip + 1] - edges[strip]
+        force[state, strip] += slope * (depth**2 / 2 - height * np.maximum(depth - height / 2, 0))
+        moment[state, strip] += slope * (depth**3 / 6 - height**2 / 2 * np.maximum(depth - 2 * height / 3, 0))
 
     def strips(self, low: FloatArray, high: FloatArray) -> tuple[FloatArray, FloatArray, FloatArray]:
         """Zeroth, first and second moment of the pressure over strips, without loss of digits.
@@ -214,7 +234,13 @@ class Diagram:
     def gross(self, z: float) -> FloatArray:
         """Sum of all terms' magnitudes at an elevation, the scale against which a sum may count as nil, (n,). [Pa]."""
         depth = np.maximum(self.knot - z, 0)
-        return ((np.abs(self.step) + np.abs(self.slope) * depth) * (depth > 0)).sum(axis=1)
+        magnitude = (np.abs(self.step) + np.abs(self.slope) * depth) * (depth > 0)
+        return np.asarray(magnitude.sum(axis=1))
+
+    def rounding(self, z: float) -> FloatArray:
+        """Pressure at an elevation that is only rounding of its terms and of their elevations, (n,). [Pa]."""
+        elevations = (np.abs(self.slope) * (np.abs(self.knot) + abs(z))).sum(axis=1)
+        return np.asarray(_ROUNDING * self.gross(z) + _ELEVATION_ROUNDING * elevations)
 
     def below(self, top: float) -> Diagram:
         """Return the diagram cut off at an elevation: the same below it, nothing above it."""

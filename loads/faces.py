@@ -12,6 +12,7 @@ from shapely import Polygon
 from loads.arc import ArcShape
 from loads.arrays import FloatArray
 from loads.diagram import Diagram
+from loads.disc import segment_moments
 from loads.outline import width_strips
 from loads.records.panel import Panel, ring_values
 
@@ -129,15 +130,14 @@ class StripFace:
         ∫p b ds = ∫p b dz / sin θ and moment about the bottom edge ∫p b s ds = ∫p b (z − z₀) dz / sin² θ.
         """
         sine = math.sin(self.tilt)
-        low = self.bottom + self.strip_table[:, 0] * sine
-        high = self.bottom + self.strip_table[:, 1] * sine
-        at_low, at_high = self.strip_table[:, 2], self.strip_table[:, 3]
-        change = (at_high - at_low) / (high - low)
-        zeroth, first, second = diagram.strips(low, high)
+        start, end, at_low, at_high = self.strip_table.T
+        change = (at_high - at_low) / ((end - start) * sine)
+        low = start * sine
+        zeroth, first, second = diagram.raised(-self.bottom).strips(low, end * sine)
         force = zeroth * at_low + first * change
         about_low = first * at_low + second * change
         normal = force.sum(axis=1) / sine
-        upright = (about_low + force * (low - self.bottom)).sum(axis=1)
+        upright = (about_low + force * low).sum(axis=1)
         scale = diagram.gross(self.bottom) * self.area
         return plane_resultant(self.bottom, self.tilt, normal, upright / sine**2, scale)
 
@@ -151,7 +151,7 @@ def plane_resultant(
         cosine = 0.0
     return Resultant(
         horizontal=normal * sine,
-        vertical=-normal * cosine,
+        vertical=0.0 - normal * cosine,
         total=normal,
         moment=moment,
         line_of_action=line_of_action(bottom, normal, moment * sine, scale),
@@ -195,46 +195,22 @@ class CircleFace:
         """Position at an elevation, from the bottom edge toward the protected side. [m]."""
         return (z - self.bottom) / math.tan(self.tilt) if abs(self.tilt - math.pi / 2) > 1e-12 else 0.0
 
-    def segment(self, chord: FloatArray) -> tuple[FloatArray, FloatArray, FloatArray]:
-        """Area of the disc below a chord, and its first and second moment about the disc's middle.
-
-        Parameters
-        ----------
-        chord
-            Height of the chord above the middle along the face, within ±radius. [m]
-
-        Returns
-        -------
-        tuple of FloatArray
-            A [m²], ∫t dA [m³] and ∫t² dA [m⁴], t measured up the face from the middle.
-        """
-        r = self.radius
-        half = np.sqrt(np.maximum(r**2 - chord**2, 0))
-        angle = np.arcsin(np.clip(chord / r, -1, 1)) + math.pi / 2
-        area = r**2 * angle + chord * half
-        first = -2 / 3 * half**3
-        second = (r**4 * angle - chord * half * (r**2 - 2 * chord**2)) / 4
-        return area, first, second
-
     def resultant(self, diagram: Diagram) -> Resultant:
         """Force and moment of a pressure diagram on this face, in closed form.
 
         Notes
         -----
-        A ramp of slope g that starts at u above the middle (along the face) gives the force
-        g·sin θ·(u·A − Q) and a step s the force s·A, with A, Q, I of the disc's segment below u; moments about
-        the bottom point are those about the middle plus radius times force.
+        A ramp of slope g that starts at h above the lowest point (along the face) gives the force
+        g·sin θ·(h·A − Q) and a step s the force s·A; about the lowest point they have the moments
+        g·sin θ·(h·Q − I) and s·Q, with A, Q, I of the disc's segment below h.
         """
         sine = math.sin(self.tilt)
         cut = diagram.below(self.top)
-        start = (cut.knot - self.bottom) / sine - self.radius
-        chord = np.clip(start, -self.radius, self.radius)
-        area, first, second = self.segment(chord)
+        chord = np.clip((cut.knot - self.bottom) / sine, 0.0, self.length)
+        area, first, second = segment_moments(chord, self.radius)
         ramp = cut.slope * sine
-        force = cut.step * area + ramp * (chord * area - first)
-        about_middle = cut.step * first + ramp * (chord * first - second)
-        normal = force.sum(axis=1)
-        moment = about_middle.sum(axis=1) + self.radius * normal
+        normal = (cut.step * area + ramp * (chord * area - first)).sum(axis=1)
+        moment = (cut.step * first + ramp * (chord * first - second)).sum(axis=1)
         scale = diagram.gross(self.bottom) * self.area
         return plane_resultant(self.bottom, self.tilt, normal, moment, scale)
 
@@ -263,6 +239,11 @@ class ArcFace:
         return self.bottom + self.shape.height
 
     @property
+    def length(self) -> float:
+        """Straight distance from edge to edge. [m]."""
+        return self.shape.chord
+
+    @property
     def area(self) -> float:
         """Area of the curved face. [m²]."""
         arc = self.shape
@@ -278,29 +259,18 @@ class ArcFace:
 
         Notes
         -----
-        Horizontal: the vertical projection. Vertical: −b∫p dx, the weight of the real or imaginary fluid above.
+        Horizontal: the vertical projection. Vertical: −b∫p dx, the weight of the real or imaginary fluid above;
+        a ramp that starts at the height h takes the prism ∫x dy from the bottom edge up to h.
         All pressures point through the centre, so the moment about it is nil and the moment about the bottom
         edge is that of the resultant placed at the centre.
         """
         arc = self.shape
-        cut = diagram.below(self.top)
-        bottom, top = np.array([self.bottom]), np.array([self.top])
-        zeroth, first, _ = cut.strips(bottom, top)
+        cut = diagram.raised(-self.bottom).below(arc.height)
+        zeroth, first, _ = cut.strips(np.zeros(1), np.array([arc.height]))
         horizontal = zeroth[:, 0] * self.width
-        centre = self.bottom + arc.centre_z
-        rise = np.clip(cut.knot, self.bottom, self.top) - centre
-        foot = -arc.centre_z
-
-        def across(height: FloatArray | float) -> FloatArray:
-            return arc.bulge * np.sqrt(np.maximum(arc.radius**2 - np.square(height), 0))
-
-        def half_area(height: FloatArray | float) -> FloatArray:
-            inner = np.arcsin(np.clip(np.divide(height, arc.radius), -1, 1))
-            return (arc.radius**2 * inner - height * arc.bulge * across(height)) / 2
-
-        run = across(rise) - across(foot)
-        run_moment = -arc.bulge * (half_area(rise) - half_area(foot))
-        vertical = -self.width * (cut.step * run + cut.slope * (rise * run - run_moment)).sum(axis=1)
+        rise = np.clip(cut.knot, 0.0, arc.height)
+        run, prism = arc.run_and_prism(rise)
+        vertical = -self.width * (cut.step * run + cut.slope * prism).sum(axis=1)
         scale = diagram.gross(self.bottom) * self.area
         return Resultant(
             horizontal=horizontal,

@@ -63,7 +63,7 @@ def crossing_levels(
     first = ratios(np.linspace(low, high, _POINTS))
     count = first.shape[1]
     at_low = first[0] >= 1
-    reached = (first >= 1).any(axis=0)
+    reached = np.asarray((first >= 1).any(axis=0))
     index = np.maximum(np.argmax(first >= 1, axis=0), 1)
     width = (high - low) / (_POINTS - 1)
     start = low + (index - 1) * width

@@ -14,9 +14,10 @@ _NUMBER = r"[+-]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d{1,3})?"
 _SIMPLE = re.compile(rf"({_NUMBER})\s*([^\d\s.,+-].*)?", re.ASCII | re.DOTALL)
 _WHOLE_AND_FRACTION = r"(?:(\d+)\s+)?(\d+)/(\d+)|(\d+(?:\.\d*)?|\.\d+)"
 _FEET_INCHES = re.compile(
-    rf"([+-]?)(\d+)\s*(?:ft|')\s*-?\s*(?:{_WHOLE_AND_FRACTION})\s*(?:in|\"|'')", re.ASCII
+    rf"([+-]?)(\d+)\s*(?:ft|')(?:\s*|-|\s+-\s+)(?:{_WHOLE_AND_FRACTION})\s*(?:in|\"|'')", re.ASCII
 )
 _INCH_FRACTION = re.compile(r"([+-]?)(?:(\d+)\s+)?(\d+)/(\d+)\s*(?:in|\")", re.ASCII)
+_CONTROL = re.compile(r"[\x00-\x1f\x7f]")
 _TYPED_LIMIT = 60
 
 
@@ -64,9 +65,8 @@ class Quantity:
 
 
 def _clean(text: str) -> str:
-    return (
-        text.strip().replace("−", "-").replace("³", "3").replace("²", "2").replace("′", "'").replace("″", '"')
-    )
+    plain = text.strip().replace("−", "-").replace("′", "'").replace("″", '"')
+    return re.sub("(?<=[a-z])[²³]", lambda power: str("²³".index(power[0]) + 2), plain)
 
 
 def _canonical_unit(symbol: str) -> str:
@@ -78,7 +78,7 @@ def _feet_and_inches(text: str) -> float | None:
     match = _FEET_INCHES.fullmatch(text)
     if match:
         sign, feet, whole, top, bottom, decimal = match.groups()
-        if bottom is not None and int(bottom) == 0:
+        if bottom is not None and int(top) >= int(bottom):
             return None
         inches = float(decimal) if decimal else float(int(whole or 0) + Fraction(int(top), int(bottom)))
         if inches >= 12:
@@ -125,11 +125,11 @@ def read_quantity(text: str, kind: str, example: str = "") -> tuple[float, str]:
     --------
     >>> read_quantity("12.5 ft", "length")
     (3.81, 'ft')
-    >>> read_quantity("-6 in", "length")
-    (-0.1524, 'in')
+    >>> read_quantity("400 mm", "length")
+    (0.4, 'mm')
     """
     example = example or EXAMPLES[kind]
-    if len(text) > _TYPED_LIMIT:
+    if len(text) > _TYPED_LIMIT or _CONTROL.search(text):
         raise UnreadableQuantityError(f'it must be one number and one unit, for example "{example}"')
     cleaned = _clean(text)
     if kind == "length":
@@ -145,23 +145,24 @@ def read_quantity(text: str, kind: str, example: str = "") -> tuple[float, str]:
     if not unit_text:
         raise UnreadableQuantityError(f'it needs a unit, for example "{with_unit_of(example, number)}"')
     unit = _canonical_unit(unit_text)
-    if unit == "'" and kind == "length":
-        unit = "ft"
-    elif unit == '"' and kind == "length":
-        unit = "in"
+    if kind == "length":
+        unit = {"'": "ft", '"': "in"}.get(unit, unit)
     if unit not in units_of(kind):
-        raise UnreadableQuantityError(_wrong_unit(unit, kind, with_unit_of(example, number)))
+        raise UnreadableQuantityError(_wrong_unit(unit, kind, number, example))
     value = to_si(float(number), unit, kind)
     if not math.isfinite(value):
         raise UnreadableQuantityError(f'it is too large a number; write for example "{example}"')
     return value, unit
 
 
-def _wrong_unit(unit: str, kind: str, example: str) -> str:
+def _wrong_unit(unit: str, kind: str, number: str, example: str) -> str:
+    if re.search(r"\d", unit.rstrip("23")):
+        also = "; feet and inches as 6 ft 6 in, the inches below 12" if kind == "length" else ""
+        return f'it must be one number and one unit, for example "{example}"{also}'
     accepted = ", ".join(units_of(kind))
     others = kinds_of(unit)
     if others:
         reason = f"{unit} is a unit of {others[0]}, and this is a {kind}"
     else:
         reason = f'the unit "{unit[:20]}" is not known here'
-    return f'{reason}; write it with one of {accepted}, for example "{example}"'
+    return f'{reason}; write it with one of {accepted}, for example "{with_unit_of(example, number)}"'

@@ -25,8 +25,6 @@ STRAIGHT_TOLERANCE = 1e-9
 """Largest relative difference allowed for faces with straight outlines."""
 FITTED_TOLERANCE = 1e-6
 """The same for circles and arcs."""
-_ROUNDING = 1e-12
-"""Share of the gross load below which a difference is rounding."""
 
 _NODES, _WEIGHTS = np.polynomial.legendre.leggauss(4)
 _FINE_NODES, _FINE_WEIGHTS = np.polynomial.legendre.leggauss(24)
@@ -98,10 +96,10 @@ def _layer_pressure(
         assert layer.fluid_unit_weight is not None
         mud = layer.fluid_unit_weight.value * np.clip(head - z, 0.0, head - foot)
         water = water_unit_weight * np.maximum(np.minimum(level, head) - np.maximum(z, foot), 0.0)
-        return mud - water
+        return np.asarray(mud - water)
     raw = _unfloored(layers, index, z, level, water_unit_weight, tilt, bottom)
     inside = (z < head) & (z >= foot)
-    return np.where(inside, np.maximum(raw, 0.0), 0.0)
+    return np.asarray(np.where(inside, np.maximum(raw, 0.0), 0.0))
 
 
 def _unfloored(
@@ -153,7 +151,7 @@ def _zero_columns(setting: Setting, side: str, rough: FloatArray) -> list[FloatA
     weight = setting.fluids[side].unit_weight
     columns = []
     for index, layer in enumerate(layers):
-        if layer.is_fluid or layer.cohesion is None or layer.cohesion.value == 0:
+        if layer.is_fluid or not _may_be_tension(layers[: index + 1], weight):
             continue
         middle = (rough[:, :-1] + rough[:, 1:]) / 2
         span = rough[:, 1:] - rough[:, :-1]
@@ -165,6 +163,13 @@ def _zero_columns(setting: Setting, side: str, rough: FloatArray) -> list[FloatA
         shift = np.where(slope != 0, (lower + upper) / 2 / np.where(slope != 0, slope, 1.0), 0.0)
         columns.append(np.clip(middle + shift, rough[:, :-1], rough[:, 1:]))
     return columns
+
+
+def _may_be_tension(layers: Sequence[Sediment], water_unit_weight: float) -> bool:
+    """Whether the lowest of these layers may have to be cut off at zero: cohesion, or soil lighter than water."""
+    cohesion = layers[-1].cohesion
+    light = any(not over.is_fluid and unit_weights(over, water_unit_weight)[1] < 0 for over in layers)
+    return light or (cohesion is not None and cohesion.value > 0)
 
 
 def _points(breaks: FloatArray, nodes: FloatArray, weights: FloatArray) -> tuple[FloatArray, FloatArray]:
@@ -242,8 +247,12 @@ def _arc(setting: Setting, panel: Panel) -> tuple[FloatArray, FloatArray, FloatA
     assert panel.height is not None
     arc = panel.arc_shape()
     bottom = panel.bottom.value
-    breaks = _breaks(setting, bottom, bottom + panel.height.value, np.zeros(0))
-    angles = np.arcsin(np.clip((breaks - bottom - arc.centre_z) / arc.radius, -1, 1))
+    top = bottom + panel.height.value
+    breaks = _breaks(setting, bottom, top, np.zeros(0))
+    foot = math.atan2(-arc.centre_z, -arc.bulge * arc.centre_x)
+    head = math.atan2(arc.height - arc.centre_z, arc.bulge * (arc.offset - arc.centre_x))
+    inner = np.arcsin(np.clip((breaks - bottom - arc.centre_z) / arc.radius, -1, 1))
+    angles = np.where(breaks <= bottom, foot, np.where(breaks >= top, head, np.clip(inner, foot, head)))
     angle, w = _points(angles, _FINE_NODES, _FINE_WEIGHTS)
     rise = arc.centre_z + arc.radius * np.sin(angle)
     x = arc.centre_x + arc.bulge * arc.radius * np.cos(angle)
@@ -258,7 +267,7 @@ def recheck(
     horizontal: FloatArray,
     vertical: FloatArray,
     moment: FloatArray,
-    gross_force: FloatArray,
+    rounding_force: FloatArray,
     reach: float,
 ) -> Recheck:
     """Compute force and moment a second time and compare.
@@ -269,10 +278,10 @@ def recheck(
         Levels, fluids and panel.
     horizontal, vertical, moment
         Figures of the first computation, shape (n,). [N, N, N·m]
-    gross_force
-        Sum of the magnitudes of all loads, below whose rounding a difference does not count, shape (n,). [N]
+    rounding_force
+        Force below which a difference is rounding of the numbers that went in, shape (n,). [N]
     reach
-        Height of the face, which makes a moment of the gross force. [m]
+        Length of the face from bottom to top, which makes a moment of that force. [m]
 
     Returns
     -------
@@ -283,17 +292,15 @@ def recheck(
     route = {"circle": _circle, "arc": _arc}.get(panel.shape, _straight)
     again = route(setting, panel)
     tolerance = FITTED_TOLERANCE if panel.shape in ("circle", "arc") else STRAIGHT_TOLERANCE
-    gross_moment = gross_force * reach
+    rounding_moment = rounding_force * reach
     difference = np.zeros(setting.levels.states)
     agrees = np.ones(setting.levels.states, dtype=bool)
-    for first, second, gross in zip(
-        (horizontal, vertical, moment), again, (gross_force, gross_force, gross_moment), strict=True
-    ):
+    roundings = (rounding_force, rounding_force, rounding_moment)
+    for first, second, rounding in zip((horizontal, vertical, moment), again, roundings, strict=True):
         apart = np.abs(first - second)
-        rounding = _ROUNDING * gross
         larger = np.maximum(np.abs(first), np.abs(second))
         agrees &= apart <= tolerance * larger + rounding
-        counted = apart > rounding
+        counted = ~(apart <= rounding)
         difference = np.maximum(difference, np.where(counted, apart / np.where(counted, larger, 1.0), 0.0))
     return Recheck(
         horizontal=again[0], vertical=again[1], moment=again[2], difference=difference, agrees=agrees

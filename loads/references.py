@@ -206,6 +206,26 @@ _TEXTBOOKS = (
     ),
 )
 
+_PRACTICE = (
+    Reference(
+        key="HeadTable",
+        citation="Table of pressure γh, force γh²/2 and moment γh³/6 of a head of fresh water, "
+        "62.4 lb/ft³, on a "
+        "vertical face with the other side dry, and an example of a stop-log bay, "
+        "both worked by hand from these "
+        "three formulas",
+        edition="none",
+        status="common practice, no source",
+    ),
+    Reference(
+        key="Quimby",
+        citation="T. B. Quimby, A Beginner's Guide to ASCE 7-10, section 6.7, an open teaching guide",
+        edition="for ASCE 7-10",
+    ),
+)
+
 REFERENCES: dict[str, Reference] = {
-    reference.key: reference for group in (_METHODS, _WATER, _MECHANICS, _TEXTBOOKS) for reference in group
+    reference.key: reference
+    for group in (_METHODS, _WATER, _MECHANICS, _TEXTBOOKS, _PRACTICE)
+    for reference in group
 }

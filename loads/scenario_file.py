@@ -25,6 +25,7 @@ MAX_FILE_BYTES = 1_000_000
 BARRIER_KEYS = ("panel",)
 """Tables of the file that hold barriers; their ids share one space."""
 _SHOWN = 40
+_VERBS = ("belongs", "has", "is", "must", "needs", "would")
 
 
 def parse_document(data: bytes) -> Document:
@@ -36,19 +37,39 @@ def parse_document(data: bytes) -> Document:
         Too large a file, not UTF-8, or not TOML.
     """
     if len(data) > MAX_FILE_BYTES:
-        rule = f"is {len(data):,} bytes long; a scenario file may have at most {MAX_FILE_BYTES:,}".replace(
-            ",", " "
-        )
-        raise ScenarioError([Problem(path="the file", value="", rule=rule)])
+        raise _too_large(len(data))
     try:
-        return tomllib.loads(data.decode("utf-8-sig").replace("\r\n", "\n"))
+        document = tomllib.loads(data.decode("utf-8-sig").replace("\r\n", "\n"))
+        if not _holds_vast_number(document):
+            return document
+        rule = "holds a whole number of more than 18 digits"
     except UnicodeDecodeError:
         rule = "is not UTF-8 text; save it as a plain text file"
     except tomllib.TOMLDecodeError as error:
         rule = f"is not a scenario file (TOML): {error}"
+    except ValueError:  # from int(), for thousands of digits
+        rule = "holds a whole number of more than 18 digits"
     except RecursionError:
         rule = "is nested too deeply to be a scenario file"
     raise ScenarioError([Problem(path="the file", value="", rule=rule)]) from None
+
+
+def _too_large(size: int) -> ScenarioError:
+    rule = f"is {size:,} bytes long; a scenario file may have at most {MAX_FILE_BYTES:,}".replace(",", " ")
+    return ScenarioError([Problem(path="the file", value="", rule=rule)])
+
+
+def _holds_vast_number(document: Document) -> bool:
+    waiting: list[object] = [document]
+    while waiting:
+        value = waiting.pop()
+        if isinstance(value, dict):
+            waiting.extend(value.values())
+        elif isinstance(value, list):
+            waiting.extend(value)
+        elif isinstance(value, int) and abs(value) >= 10**18:
+            return True
+    return False
 
 
 def read_file(path: Path) -> Document:
@@ -63,7 +84,7 @@ def read_file(path: Path) -> Document:
         with path.open("rb") as stream:
             data = stream.read(MAX_FILE_BYTES + 1)
         if len(data) > MAX_FILE_BYTES:
-            data = data.ljust(path.stat().st_size, b" ")
+            raise _too_large(path.stat().st_size)
     except OSError as error:
         rule = f"cannot be read: {error.strerror or error}"
         raise ScenarioError([Problem(path=f"the file {path}", value="", rule=rule)]) from None
@@ -125,7 +146,7 @@ def _problems(error: ValidationError, document: Mapping[str, Any]) -> list[Probl
         where = _path(loc, document)
         if item["type"] == "rules":
             problems += [
-                Problem(path=_joined(where, path), value=value, rule=rule)
+                Problem(path=_joined(where, path), value=value, rule=_clause(value, rule))
                 for path, value, rule in item["ctx"]["problems"]
             ]
         else:
@@ -171,16 +192,21 @@ def _wording(item: Any, loc: Sequence[int | str]) -> dict[str, str]:  # noqa: AN
         return {"value": "", "rule": f"is not a known key; {nearest_key(str(loc[-1]), _known_keys(loc))}"}
     if kind == "rule":
         rule = str(context["rule"])
-        verb_first = rule.split(" ", 1)[0] in ("has", "is", "needs", "must")
         value = "" if rule.startswith(("has ", "is ")) else _shown(item["input"])
-        return {"value": value, "rule": f"it {rule}" if value and verb_first else rule}
+        return {"value": value, "rule": _clause(value, rule)}
     if kind in ("literal_error", "enum"):
         return {"value": _shown(item["input"]), "rule": f"it must be {context['expected']}"}
     return {"value": _shown(item["input"]), "rule": _general_rule(kind, item["msg"], context)}
 
 
+def _clause(value: str, rule: str) -> str:
+    """Rule as it follows the value in a sentence."""
+    return f"it {rule}" if value and rule.split(" ", 1)[0] in _VERBS else rule
+
+
 def _general_rule(kind: str, message: str, context: Mapping[str, Any]) -> str:
     rules = {
+        "datetime_type": "it must be a date and time with a zone, for example 2031-04-02T06:00:00-05:00",
         "string_type": "it must be a text in quotes",
         "float_type": "it must be a plain number without a unit",
         "int_type": "it must be a whole number",
@@ -197,7 +223,8 @@ def _general_rule(kind: str, message: str, context: Mapping[str, Any]) -> str:
         "too_short": "it needs at least {min_length}",
         "too_long": "it may have at most {max_length}",
     }
-    return rules[kind].format(**context) if kind in rules else message[:1].lower() + message[1:]
+    bounds = {name: f"{bound:g}" if isinstance(bound, float) else bound for name, bound in context.items()}
+    return rules[kind].format(**bounds) if kind in rules else message[:1].lower() + message[1:]
 
 
 def _known_keys(loc: Sequence[int | str]) -> list[str]:

@@ -144,11 +144,12 @@ def sediment_diagrams(
 def _floored_piece(start: FloatArray, slope: float, upper: FloatArray, lower: FloatArray) -> list[Term]:
     """Terms of a straight piece of pressure between two elevations, taken as nil where it would be tension."""
     end = start + slope * (upper - lower)
-    tension = np.minimum(start, 0.0)
-    begin = np.maximum(upper + tension / slope, lower) if slope > 0 else upper
-    step = np.maximum(start, 0.0)
-    grows = np.where(end > 0, slope, 0.0)
-    return [(begin, step, grows), (lower, -np.maximum(end, 0.0), -grows)]
+    grade = np.divide(start, slope, out=np.zeros_like(start), where=np.full_like(start, slope) != 0)
+    zero = np.clip(upper + grade, lower, upper)
+    head = np.where(start < 0, zero, upper)
+    foot = np.where(end < 0, zero, lower)
+    grows = np.where((start > 0) | (end > 0), slope, 0.0)
+    return [(head, np.maximum(start, 0.0), grows), (foot, -np.maximum(end, 0.0), -grows)]
 
 
 def _fluid_diagram(layer: Sediment, foot: float, level: FloatArray, water_unit_weight: float) -> Diagram:

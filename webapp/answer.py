@@ -107,7 +107,13 @@ def _barrier(barrier: Barrier, index: int) -> dict[str, Any]:
             "first": {"horizontal": barrier.first[0], "moment": barrier.first[1]},
             "second": {"horizontal": barrier.second[0], "moment": barrier.second[1]},
         }
-        nothing: dict[str, Any] = {"diagram": [], "parts": [], "checks": [], "first_limit": None, "remarks": []}
+        nothing: dict[str, Any] = {
+            "diagram": [],
+            "parts": [],
+            "checks": [],
+            "first_limit": None,
+            "remarks": [],
+        }
         return {**head, "load": None, "recheck": disagreement, **nothing}
     face, found = barrier.face, barrier.resultant
     rows = barrier.diagram.rows(face.bottom, face.top, index)

@@ -3,11 +3,13 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Sequence
 from dataclasses import dataclass
+from datetime import datetime
 from typing import Literal
 
 from loads.quantity import Quantity
-from loads.records.scenario import Scenario
+from loads.records.scenario import Scenario, zone_name
 from loads.units import from_si, to_si
 
 System = Literal["US", "SI"]
@@ -159,6 +161,19 @@ def from_si_factor(choice: Choice) -> float:
     return to_si(1.0, choice.unit, choice.kind)
 
 
+def show_all(values: Sequence[float], kind: str, system: System, digits: int = PAGE_DIGITS) -> list[str]:
+    """Values of a column, all in the same unit: the larger one when any of them calls for it."""
+    if kind not in CHOICES[system] or kind == "elevation":
+        return [show(value, kind, system, digits) for value in values]
+    choice = CHOICES[system][kind]
+    sizes = [abs(from_si(value, choice.unit, choice.kind)) for value in values if math.isfinite(value)]
+    unit, label = choice.unit, choice.label
+    if sizes and max(sizes) >= choice.from_size:
+        unit, label = choice.larger, choice.larger_label
+    joint = "" if label == "°" else NO_BREAK
+    return [f"{significant(from_si(value, unit, choice.kind), digits)}{joint}{label}" for value in values]
+
+
 def elevation(value: float, system: System, datum: str = "") -> str:
     """Elevation with two decimals in feet and three in metres, and its datum when given; "dry" without water."""
     if not math.isfinite(value):
@@ -181,6 +196,21 @@ def pedigree(quantity: Quantity) -> str:
     """Source and date of a value, in words."""
     words = quantity.source or "no source stated"
     return f"{words}, {quantity.dated.isoformat()}" if quantity.dated else words
+
+
+def moment_text(moment: datetime) -> str:
+    """Day, time and zone of a moment, for example ``2 Apr 2031 06:00 UTC−05:00``."""
+    return f"{moment.day} {moment:%b %Y %H:%M} {zone_name(moment)}"
+
+
+def age_text(moment: datetime, now: datetime) -> str:
+    """How old a figure is, in words."""
+    minutes = round((now - moment).total_seconds() / 60)
+    if minutes < 0:
+        return "later than this machine's clock"
+    if minutes < 120:
+        return f"{minutes} min old"
+    return f"{minutes // 60} h old" if minutes < 60 * 48 else f"{minutes // 1440} days old"
 
 
 def barrier_title(barrier_id: str, name: str) -> str:

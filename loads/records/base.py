@@ -149,7 +149,9 @@ class Measure:
         if self.above:
             return f"more than {self.above}"
         if self.least and self.most:
-            return f"between {self.least} and {self.most}"
+            number, unit = self.least.split(" ", 1)
+            low = number if self.most.endswith(f" {unit}") else self.least
+            return f"between {low} and {self.most}"
         return f"not less than {self.least}" if self.least else f"not more than {self.most}"
 
     def __get_pydantic_core_schema__(self, _source: object, _handler: object) -> core_schema.CoreSchema:

@@ -29,7 +29,16 @@ class Sediment(Record):
     """One layer, listed from the top down; it reaches down to the next layer or to the barrier's bottom."""
 
     side: Literal["flood", "protected"] = Field(description="Side of the barrier on which the layer lies.")
-    top: Annotated[Quantity, Measure(kind="length", meaning="Elevation of the top of the layer")]
+    top: Annotated[
+        Quantity,
+        Measure(
+            kind="length",
+            meaning="Elevation of the top of the layer",
+            least="-2000 ft",
+            most="30000 ft",
+            example="99.5 ft",
+        ),
+    ]
     pressure: PressureKind = Field(description="How the layer presses on the face.")
     name: Name = ""
     saturated_unit_weight: (

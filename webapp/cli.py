@@ -1,0 +1,94 @@
+"""The command line. Exit status 0 when computed, 2 for bad input with the messages on standard error."""
+
+import ipaddress
+import json
+import sys
+from collections.abc import Iterator
+from contextlib import contextmanager
+from pathlib import Path
+
+import click
+
+from loads import __version__
+from loads.problems import SillheadError
+
+
+def _address(_: click.Context, __: click.Parameter, value: str) -> str:
+    try:
+        return str(ipaddress.ip_address("127.0.0.1" if value == "localhost" else value))
+    except ValueError as error:
+        raise click.BadParameter("it must be an IP address such as 127.0.0.1 or 0.0.0.0") from error
+
+
+@click.group(context_settings={"help_option_names": ["-h", "--help"]})
+@click.version_option(__version__, prog_name="sillhead")
+def main() -> None:
+    """Loading checks for floodwalls and stop-log closures: a screening and planning tool."""
+
+
+@contextmanager
+def _messages() -> Iterator[None]:
+    """Turn what is wrong with an input into messages and exit status 2."""
+    try:
+        yield
+    except SillheadError as error:
+        click.echo(str(error), err=True)
+        sys.exit(2)
+
+
+@main.command()
+@click.argument("file", type=click.Path(path_type=Path))
+@click.option("--json", "as_json", is_flag=True, help="Print JSON in SI base units instead of a table.")
+@click.option(
+    "--flood-side", metavar="LEVEL", help='Level in place of the one in the file, for example "105.2 ft".'
+)
+@click.option(
+    "--protected-side", metavar="LEVEL", help='The same for the protected side; "dry" for no water.'
+)
+def check(file: Path, *, as_json: bool, flood_side: str | None, protected_side: str | None) -> None:
+    """Compute every barrier of a scenario file."""
+    from loads.assessment import assess  # noqa: PLC0415  keeps --help quick
+    from loads.scenario_file import read_file, scenario_of  # noqa: PLC0415
+    from webapp.answer import answer, with_levels  # noqa: PLC0415
+    from webapp.text_table import table_text  # noqa: PLC0415
+
+    typed = {"flood_side": flood_side, "protected_side": protected_side}
+    with _messages():
+        document = with_levels(
+            read_file(file), {side: text for side, text in typed.items() if text is not None}
+        )
+        assessment = assess(scenario_of(document))
+    if as_json:
+        click.echo(json.dumps(answer(assessment, document), ensure_ascii=False, allow_nan=False, indent=1))
+    else:
+        click.echo(table_text(assessment, document))
+
+
+@main.command()
+def schema() -> None:
+    """Print the JSON schema of the scenario format."""
+    from loads.records.scenario import scenario_schema  # noqa: PLC0415  keeps --help quick
+
+    click.echo(json.dumps(scenario_schema(), ensure_ascii=False, indent=1))
+
+
+@main.command()
+@click.option(
+    "--address", default="127.0.0.1", show_default=True, callback=_address, help="IP address to listen on."
+)
+@click.option("--port", type=click.IntRange(0, 65535), help="Port; 8501 or the next free one when left out.")
+@click.option(
+    "--data",
+    type=click.Path(file_okay=False, path_type=Path),
+    envvar="SILLHEAD_DATA",
+    help="Folder for stored plans.",
+)
+def serve(address: str, port: int | None, data: Path | None) -> None:
+    """Start the web pages."""
+    from webapp.server import serve as run_server  # noqa: PLC0415  brings Streamlit, which no other command needs
+
+    run_server(address=address, port=port, data=data)
+
+
+if __name__ == "__main__":
+    main()

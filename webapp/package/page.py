@@ -1,0 +1,255 @@
+"""The package as one HTML page: its parts gathered as text and set by the templates."""
+
+from __future__ import annotations
+
+import math
+import re
+from functools import cache
+from pathlib import Path
+from typing import Any
+
+from jinja2 import Environment, FileSystemLoader, StrictUndefined
+from markupsafe import Markup, escape
+
+from loads.assessment import Assessed, Assessment, Barrier, assess
+from loads.cautions import ASSUMPTIONS, CAUTIONS, HEADLINE, NOT_COUNTED
+from loads.document import check_code
+from loads.method import METHODS
+from loads.records.scenario import Scenario, zone_name
+from loads.references import REFERENCES
+from loads.scenario_file import Document, write_document
+from webapp.display import System, barrier_title, elevation, pedigree
+from webapp.package.barrier import (
+    BarrierView,
+    WithheldView,
+    barrier_view,
+    withheld_view,
+)
+from webapp.package.drawings import flood_line_drawing
+from webapp.package.entered import entry_groups, taken
+from webapp.package.figures import figure, unit_of, with_unit
+from webapp.package.grid import Grid, Heading, words
+from webapp.package.states import levels_of_states, package_states
+from webapp.package.tables import RESULT_DIGITS, bare, ratio_text
+
+SHEETS: dict[System, str] = {"US": "letter", "SI": "A4"}
+"""Size of the sheet by unit system, as CSS spells it."""
+SHEET_NAMES: dict[System, str] = {"US": "US Letter", "SI": "A4"}
+NOT_STATED = "not stated"
+_COMMENT_ROWS = 8
+_LOW = re.compile(r"(?<=\w)_([A-Za-z]+)")
+
+
+@cache
+def _environment() -> Environment:
+    environment = Environment(
+        loader=FileSystemLoader(Path(__file__).parent / "templates"),
+        autoescape=True,
+        undefined=StrictUndefined,
+        trim_blocks=True,
+        lstrip_blocks=True,
+    )
+    environment.filters["symbols"] = symbols
+    return environment
+
+
+def symbols(text: str) -> Markup:
+    """Formula with what follows an underscore set low.
+
+    Examples
+    --------
+    >>> symbols("h_f = L_f < z")
+    Markup('h<sub>f</sub> = L<sub>f</sub> &lt; z')
+    """
+    return Markup(_LOW.sub(r"<sub>\1</sub>", str(escape(text))))  # noqa: S704  escaped first
+
+
+def package_html(assessment: Assessment, document: Document, *, digest: str, version: str) -> str:
+    """Calculation package of an assessment as one HTML page with its style and drawings in it.
+
+    Parameters
+    ----------
+    assessment
+        Of the scenario's own levels, one state.
+    document
+        What it was computed from; it is printed as the scenario file.
+    digest
+        Fingerprint of the document.
+    version
+        Of the program.
+
+    Returns
+    -------
+    str
+        The same for the same input.
+    """
+    scenario = assessment.scenario
+    system = scenario.units
+    states = package_states(scenario)
+    many = assess(scenario, levels_of_states(states))
+    views: list[BarrierView | WithheldView] = [
+        barrier_view(barrier, many, states, scenario.datum)
+        if isinstance(barrier, Assessed)
+        else withheld_view(barrier, system, scenario.datum)
+        for barrier in assessment.barriers
+    ]
+    return (
+        _environment()
+        .get_template("package.html")
+        .render(
+            sheet=SHEETS[system],
+            sheet_name=SHEET_NAMES[system],
+            scenario=scenario,
+            system=system,
+            not_stated=NOT_STATED,
+            digest=digest,
+            code=check_code(digest),
+            version=version,
+            levels=_levels(scenario),
+            headline=HEADLINE,
+            line=flood_line_drawing(assessment, system),
+            summary=_summary(assessment),
+            governing=_governing(many, [state.name for state in states]),
+            groups=entry_groups(scenario),
+            taken=taken(scenario),
+            fluids=_fluids(assessment),
+            assumptions=ASSUMPTIONS,
+            not_counted=NOT_COUNTED,
+            states=_states_grid(assessment),
+            barriers=views,
+            methods=METHODS,
+            references=_references(),
+            cautions=CAUTIONS,
+            comment_rows=_COMMENT_ROWS,
+            file_text=write_document(document).decode(),
+            **_units(system),
+        )
+    )
+
+
+def _units(system: System) -> dict[str, Any]:
+    kinds = ("length", "pressure", "unit weight", "force", "moment")
+    return {"units": [(kind, unit_of(kind, system)) for kind in kinds]}
+
+
+def _levels(scenario: Scenario) -> list[tuple[str, str, str]]:
+    """Each level with its source; then the time of both."""
+    water, system = scenario.water, scenario.units
+    rows = []
+    for side, level in (("Flood side", water.flood_side), ("Protected side", water.protected_side)):
+        if level is None:
+            rows.append((side, "dry", "no level entered"))
+            continue
+        text = elevation(level.value, system, scenario.datum)
+        rows.append((side, text, f"entered as {level.text}; {pedigree(level)}"))
+    moment = water.as_of
+    stamp = f"{moment:%Y-%m-%d %H:%M} {zone_name(moment)}" if moment else "no time stated"
+    return [*rows, ("Levels as of", stamp, "")]
+
+
+def _summary(assessment: Assessment) -> Grid:
+    scenario = assessment.scenario
+    system, datum = scenario.units, scenario.datum
+    level = f"{unit_of('elevation', system)} {datum}"
+    headings = (
+        words("barrier"),
+        Heading(text="bottom", unit=level),
+        Heading(text="top", unit=level),
+        Heading(text="H", unit=unit_of("force", system)),
+        Heading(text="M", unit=unit_of("moment", system)),
+        Heading(text="line of action", unit=level),
+        Heading(text="largest ratio"),
+        words("of"),
+        Heading(text="rated level", unit=level),
+        Heading(text="first-limit level", unit=level),
+        words("verdict"),
+    )
+    return Grid(headings=headings, rows=tuple(_summary_row(each, system) for each in assessment.barriers))
+
+
+def _summary_row(barrier: Barrier, system: System) -> tuple[str, ...]:
+    panel = barrier.panel
+    name = barrier_title(panel.id, panel.name)
+    rated = _bare(panel.rated_level.value, system) if panel.rated_level else "–"
+    if not isinstance(barrier, Assessed):
+        return (name, _bare(panel.bottom.value, system), *("–",) * 6, rated, "–", barrier.verdict())
+    found, face = barrier.resultant, barrier.face
+    limited = [check for check in barrier.checks if check.limit is not None]
+    ratio = ratio_text(float(limited[0].ratio[0])) if limited else "–"
+    first = barrier.first_limit.level if barrier.first_limit else None
+    return (
+        name,
+        _bare(face.bottom, system),
+        _bare(face.top, system),
+        figure(float(found.horizontal[0]), "force", system, RESULT_DIGITS),
+        figure(float(found.moment[0]), "moment", system, RESULT_DIGITS),
+        _bare(float(found.line_of_action[0]), system),
+        ratio,
+        limited[0].name if limited else "–",
+        rated,
+        "–" if first is None else _bare(first, system),
+        barrier.verdict(),
+    )
+
+
+def _bare(level: float, system: System) -> str:
+    """Elevation without its unit, which stands in the heading; a dash where there is none."""
+    return bare(level, system) if math.isfinite(level) else "–"
+
+
+def _governing(many: Assessment, names: list[str]) -> list[str]:
+    """Which check has the largest ratio, at the entered levels and over all states."""
+    found = [
+        (float(ratio), i, barrier.panel.id, check.name)
+        for barrier in many.barriers
+        if isinstance(barrier, Assessed)
+        for check in barrier.checks
+        for i, ratio in enumerate(check.ratio)
+        if not math.isnan(ratio)
+    ]
+    if not found:
+        return ["No limit was entered for any barrier, so nothing governs."]
+    now = max((item for item in found if item[1] == 0), key=lambda item: item[0])
+    ever = max(found, key=lambda item: item[0])
+    first = f"Largest ratio at the levels entered: {ratio_text(now[0])}, panel {now[2]}, {now[3]}."
+    most = f"Largest ratio of all states computed: {ratio_text(ever[0])}, panel {ever[2]}, {ever[3]}"
+    return [first, f"{most}, state “{names[ever[1]]}”."]
+
+
+def _fluids(assessment: Assessment) -> Grid:
+    system = assessment.scenario.units
+    headings = (words("side"), Heading(text="unit weight"), words("where it comes from"))
+    rows = tuple(
+        (f"{side} side", with_unit(fluid.unit_weight, "unit weight", system), fluid.basis)
+        for side, fluid in assessment.fluids.items()
+    )
+    return Grid(headings=headings, rows=rows)
+
+
+def _states_grid(assessment: Assessment) -> Grid:
+    scenario = assessment.scenario
+    level = f"{unit_of('elevation', scenario.units)} {scenario.datum}"
+    headings = (
+        Heading(text="no."),
+        words("state"),
+        Heading(text="flood side", unit=level),
+        Heading(text="protected side", unit=level),
+        words("loads"),
+    )
+    rows = tuple(
+        (
+            str(number),
+            state.name,
+            bare(state.flood_side, scenario.units),
+            bare(state.protected_side, scenario.units),
+            "still water and sediment as entered",
+        )
+        for number, state in enumerate(package_states(scenario), 1)
+    )
+    return Grid(headings=headings, rows=rows)
+
+
+def _references() -> list[Any]:
+    """References that a method cites, in alphabetical order of their keys."""
+    cited = {key for group in METHODS for method in group.methods for key in method.sources}
+    return [REFERENCES[key] for key in sorted(cited)]

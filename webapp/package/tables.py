@@ -1,0 +1,138 @@
+"""Checks, rated and first-limit level, and states of one barrier as tables of the package."""
+
+from __future__ import annotations
+
+import math
+
+from loads.arrays import FloatArray
+from loads.assessment import Assessed, Assessment, Withheld
+from loads.checks import Check
+from webapp.display import NO_BREAK, System, elevation, pedigree, significant
+from webapp.package.figures import figure, percent, unit_of, with_unit
+from webapp.package.grid import Grid, Heading, words
+from webapp.package.states import State
+
+RESULT_DIGITS = 4
+"""Significant figures of results."""
+_NIL = 1e-9
+
+
+def checks_grid(barrier: Assessed, system: System, datum: str) -> Grid:
+    """Demand, limit, ratio and verdict of every check."""
+    headings = tuple(
+        Heading(text=text, words=text not in ("demand", "limit", "ratio"))
+        for text in ("check", "demand", "limit", "ratio", "verdict", "source of the limit", "remarks")
+    )
+    return Grid(headings=headings, rows=tuple(_check_row(check, system, datum) for check in barrier.checks))
+
+
+def _check_row(check: Check, system: System, datum: str) -> tuple[str, ...]:
+    demand = float(check.demand[0])
+    if check.kind == "elevation":
+        shown = f"water at {elevation(demand, system, datum)}"
+        limit = elevation(check.limit_value, system, datum)
+        if check.name == "freeboard" and check.limit is not None:
+            limit = f"{check.limit.text} to the top: {limit}"
+    else:
+        shown = with_unit(demand, check.kind, system, RESULT_DIGITS)
+        limit = with_unit(check.limit_value, check.kind, system, RESULT_DIGITS)
+    ratio = float(check.ratio[0])
+    return (
+        check.name,
+        shown,
+        limit if check.limit is not None else "none entered",
+        ratio_text(ratio),
+        check.verdict(),
+        check.source if check.limit is not None else "–",
+        " ".join(check.remarks) or "–",
+    )
+
+
+def ratio_text(ratio: float) -> str:
+    """Ratio with three figures, with more where it would read as one and is not; a dash without a limit."""
+    if math.isinf(ratio):
+        return "limit below the bottom edge"
+    if not math.isfinite(ratio):
+        return "–"
+    digits = 3
+    while digits < 7 and abs(float(f"{ratio:.{digits - 1}f}") - 1) < 1e-12 and abs(ratio - 1) > _NIL:
+        digits += 1
+    return significant(ratio, digits)
+
+
+def level_rows(barrier: Assessed, system: System, datum: str) -> tuple[tuple[str, str, str], ...]:
+    """Rated level and first-limit level side by side, each with the words that say which is which."""
+    rated = barrier.panel.rated_level
+    rated_row = (
+        "Rated level",
+        elevation(rated.value, system, datum) if rated else "none entered",
+        f"the highest water an engineer has put their name to; entered: {pedigree(rated)}"
+        if rated
+        else "the highest water an engineer has put their name to; it is entered, never computed",
+    )
+    return (rated_row, ("First-limit level", *_first_limit(barrier, system, datum)))
+
+
+def _first_limit(barrier: Assessed, system: System, datum: str) -> tuple[str, str]:
+    first = barrier.first_limit
+    if first is None:
+        return "not computed", "no limit on pressure, force or moment was entered"
+    meaning = "computed; a screening figure and no leave to let the water rise to it"
+    if first.level is None:
+        searched = elevation(first.ceiling, system, datum)
+        return "none found", f"no entered load limit is reached up to {searched}; {meaning}"
+    if first.without_water:
+        words = "is reached with no water above the bottom edge on the flood side"
+        return elevation(first.level, system, datum), f"{first.check} {words}; {meaning}"
+    protected = elevation(float(barrier.levels.protected_side[0]), system, datum)
+    reached = f"{first.check} reaches its limit there first, protected side as entered ({protected})"
+    return elevation(first.level, system, datum), f"{reached}; {meaning}"
+
+
+def states_grid(many: Assessment, barrier_id: str, states: list[State], system: System, datum: str) -> Grid:
+    """Force, moment and verdict in every state."""
+    barrier = many.barrier(barrier_id)
+    level = f"{unit_of('elevation', system)} {datum}"
+    headings = (
+        words("state"),
+        Heading(text="flood side", unit=level),
+        Heading(text="protected side", unit=level),
+        Heading(text="H", unit=unit_of("force", system)),
+        Heading(text="change of H"),
+        Heading(text="M", unit=unit_of("moment", system)),
+        Heading(text="change of M"),
+        Heading(text="largest ratio"),
+        words("verdict"),
+    )
+    rows = []
+    for i, state in enumerate(states):
+        sides = (bare(state.flood_side, system), bare(state.protected_side, system))
+        if isinstance(barrier, Withheld):
+            rows.append((state.name, *sides, *("–",) * 5, barrier.verdict()))
+            continue
+        force, moment = barrier.resultant.horizontal, barrier.resultant.moment
+        ratios = [float(check.ratio[i]) for check in barrier.checks if not math.isnan(float(check.ratio[i]))]
+        rows.append(
+            (
+                state.name,
+                *sides,
+                figure(float(force[i]), "force", system, RESULT_DIGITS),
+                _change(force, i),
+                figure(float(moment[i]), "moment", system, RESULT_DIGITS),
+                _change(moment, i),
+                ratio_text(max(ratios)) if ratios else "–",
+                barrier.verdict(i),
+            )
+        )
+    return Grid(headings=headings, rows=tuple(rows))
+
+
+def bare(level: float, system: System) -> str:
+    """Elevation without its unit, which stands in the heading."""
+    return elevation(level, system).partition(NO_BREAK)[0]
+
+
+def _change(values: FloatArray, i: int) -> str:
+    if i == 0 or values[0] == 0:
+        return "–"
+    return percent(float((values[i] - values[0]) / abs(values[0])))

@@ -68,8 +68,8 @@ class ArcShape:
         slack = _SLACK * self.radius
         if min(-self.bulge * self.centre_x, self.bulge * (self.offset - self.centre_x)) < -slack:
             return (
-                f"with its centre {_both(self.centre_z)} above the bottom edge the arc would run above its own "
-                "top edge or below its own bottom edge; take a larger radius or a smaller offset"
+                f"with its centre {_both(self.centre_z)} above the bottom edge the arc would run above its "
+                "own top edge or below its own bottom edge; take a larger radius or a smaller offset"
             )
         return ""
 
@@ -79,7 +79,7 @@ class ArcShape:
         return self.centre_x + self.bulge * math.sqrt(max(self.radius**2 - rise**2, 0.0))
 
     def run_and_prism(self, height: FloatArray) -> tuple[FloatArray, FloatArray]:
-        """Position of the arc, and the area between it and the vertical through the bottom edge below a height.
+        """Position of the arc at a height, and the area between it and the vertical through its bottom edge.
 
         Parameters
         ----------
@@ -93,8 +93,9 @@ class ArcShape:
 
         Notes
         -----
-        x = ±y (2 y_c − y) / (√(R² − (y − y_c)²) + |x_c|); the area is that of the triangle under the chord and of
-        the segment between chord and arc. Neither loses digits on a nearly flat arc or near its bottom edge.
+        x = ±y (2 y_c − y) / (√(R² − (y − y_c)²) + |x_c|); the area is that of the triangle under the chord
+        and of the segment between chord and arc. Neither loses digits on a nearly flat arc or near its bottom
+        edge.
         """
         foot = max(-self.bulge * self.centre_x, 0.0)
         reach = np.sqrt(np.maximum(self.radius**2 - (height - self.centre_z) ** 2, 0.0)) + foot

@@ -1,4 +1,4 @@
-"""The assessment of a scenario: what the loads amount to on every barrier, checked twice, against its limits."""
+"""The assessment of a scenario: what loads every barrier, computed twice, against its limits."""
 
 from __future__ import annotations
 
@@ -6,25 +6,20 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from loads.arrays import FloatArray
-from loads.checks import Check, Verdict, check_of, level_check, worst
+from loads.checks import Check, Verdict, worst
 from loads.diagram import Diagram
-from loads.faces import ArcFace, CircleFace, Resultant, StripFace, face_of
-from loads.first_limit import FirstLimit, crossing_levels
+from loads.faces import Resultant, face_of
+from loads.first_limit import FirstLimit
 from loads.limits_of_use import OutsideFormulaError
 from loads.load import Load, Setting, loads_on
+from loads.panel_checks import Face, first_limit_of, panel_checks
 from loads.problems import Problem, ScenarioError
 from loads.recheck import Recheck, recheck
 from loads.records.panel import Panel
 from loads.records.scenario import Scenario
 from loads.remarks import remarks_on
-from loads.states import DRY, Levels, levels_of, rising
+from loads.states import Levels, levels_of
 from loads.water import Fluid, fluid_of
-
-Face = StripFace | CircleFace | ArcFace
-
-SEARCH_ABOVE_TOP = 3.0
-"""How far above a barrier's top a first-limit level is looked for. [m]"""
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -33,6 +28,8 @@ class Withheld:
 
     Attributes
     ----------
+    record
+        What stands on the line.
     setting
         What loads it.
     first, second
@@ -42,15 +39,11 @@ class Withheld:
         Largest relative difference. [–]
     """
 
+    record: Panel
     setting: Setting
     first: tuple[float, float]
     second: tuple[float, float]
     difference: float
-
-    @property
-    def panel(self) -> Panel:
-        """The record."""
-        return self.setting.panel
 
     def verdict(self, _index: int = 0) -> Verdict:
         """Return "withheld", always."""
@@ -63,6 +56,8 @@ class Assessed:
 
     Attributes
     ----------
+    record
+        What stands on the line.
     setting
         What loads it.
     face
@@ -85,6 +80,7 @@ class Assessed:
         On the first state.
     """
 
+    record: Panel
     setting: Setting
     face: Face
     loads: tuple[Load, ...]
@@ -95,11 +91,6 @@ class Assessed:
     checks: tuple[Check, ...]
     first_limit: FirstLimit | None
     remarks: tuple[str, ...]
-
-    @property
-    def panel(self) -> Panel:
-        """The record."""
-        return self.setting.panel
 
     @property
     def levels(self) -> Levels:
@@ -144,7 +135,7 @@ class Assessment:
             There is none.
         """
         for barrier in self.barriers:
-            if barrier.panel.id == barrier_id:
+            if barrier.record.id == barrier_id:
                 return barrier
         raise KeyError(barrier_id)
 
@@ -202,6 +193,7 @@ def _panel(setting: Setting, near: float) -> Barrier:
     checks = panel_checks(setting, face, diagram, resultant, near)
     order = sorted(checks, key=lambda check: -_pressing(check))
     return Assessed(
+        record=setting.panel,
         setting=setting,
         face=face,
         loads=loads,
@@ -223,104 +215,9 @@ def _pressing(check: Check) -> float:
 def _withheld(setting: Setting, first: Resultant, second: Recheck) -> Withheld:
     index = int(np.argmax(np.where(second.agrees, -1.0, second.difference)))
     return Withheld(
+        record=setting.panel,
         setting=setting,
         first=(float(first.horizontal[index]), float(first.moment[index])),
         second=(float(second.horizontal[index]), float(second.moment[index])),
         difference=float(second.difference[index]),
-    )
-
-
-def peak_pressure(diagram: Diagram, face: Face) -> FloatArray:
-    """Net pressure of greatest magnitude on a face, with its sign, shape (n,). [Pa]."""
-    greatest, least = diagram.extremes(face.bottom, face.top)
-    return np.where(greatest >= -least, greatest, least)
-
-
-def load_checks(panel: Panel, pressure: FloatArray, resultant: Resultant, near: float) -> list[Check]:
-    """Checks of what presses on a panel: pressure at a point, total force and moment, each with its sign."""
-    limits = panel.limits
-    reverse = ("The load pushes toward the flood side; the limit was entered without a direction.",)
-    entered = (
-        ("pressure at a point", "pressure", pressure, limits.pressure),
-        ("total force", "force", resultant.total, limits.force),
-        ("moment about the bottom", "moment", resultant.moment, limits.moment),
-    )
-    return [
-        check_of(
-            subject=f"panel {panel.id}",
-            name=name,
-            kind=kind,
-            demand=demand,
-            limit=limit,
-            near=near,
-            remarks=reverse if demand[0] < 0 and limit is not None else (),
-        )
-        for name, kind, demand, limit in entered
-    ]
-
-
-def panel_checks(
-    setting: Setting, face: Face, diagram: Diagram, resultant: Resultant, near: float
-) -> list[Check]:
-    """Checks of a panel: pressure at a point, total force, moment, rated level and freeboard."""
-    panel = setting.panel
-    checks = load_checks(panel, peak_pressure(diagram, face), resultant, near)
-    level = setting.levels.flood_side
-    freeboard = panel.limits.freeboard
-    for name, limit, highest in (
-        (
-            "rated level",
-            panel.rated_level,
-            panel.rated_level.value if panel.rated_level else np.nan,
-        ),
-        ("freeboard", freeboard, face.top - freeboard.value if freeboard else np.nan),
-    ):
-        checks.append(
-            level_check(
-                subject=f"panel {panel.id}",
-                name=name,
-                level=level,
-                bottom=face.bottom,
-                limit=limit,
-                highest=float(highest),
-                near=near,
-            )
-        )
-    return checks
-
-
-def first_limit_of(setting: Setting, face: Face, near: float) -> FirstLimit | None:
-    """First-limit level of a panel: its load limits only, not levels that were themselves entered.
-
-    The flood side rises from the bottom of the panel to `SEARCH_ABOVE_TOP` above its top; loads count as they
-    push toward the protected side.
-    """
-    protected = float(setting.levels.protected_side[0])
-    limits = setting.panel.limits
-    if limits.pressure is None and limits.force is None and limits.moment is None:
-        return None
-    ceiling = max(face.top, float(setting.levels.flood_side.max())) + SEARCH_ABOVE_TOP
-
-    def checks_at(flood_side: FloatArray) -> list[Check]:
-        levels = rising(flood_side, protected if np.isfinite(protected) else DRY)
-        swept = Setting(levels=levels, fluids=setting.fluids, panel=setting.panel)
-        diagram = Diagram.joined(load.diagram for load in loads_on(swept))
-        greatest, _ = diagram.extremes(face.bottom, face.top)
-        found = load_checks(setting.panel, greatest, face.resultant(diagram), near)
-        return [check for check in found if check.limit is not None]
-
-    def ratios(flood_side: FloatArray) -> FloatArray:
-        return np.column_stack([check.demand / check.limit_value for check in checks_at(flood_side)])
-
-    names = [(check.subject, check.name) for check in checks_at(np.array([face.bottom]))]
-    level, reached, at_low = crossing_levels(ratios, low=face.bottom, high=ceiling)
-    if not reached.any():
-        return FirstLimit(level=None, subject="", check="", without_water=False, ceiling=ceiling)
-    first = int(np.nanargmin(level))
-    return FirstLimit(
-        level=float(level[first]),
-        subject=names[first][0],
-        check=names[first][1],
-        without_water=bool(at_low[first]),
-        ceiling=ceiling,
     )

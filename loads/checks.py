@@ -65,7 +65,7 @@ class Check:
         if self.limit is None:
             return "not checked"
         ratio = float(self.ratio[index])
-        if ratio > 1 + _ROUNDING:
+        if not ratio <= 1 + _ROUNDING:  # so worded that what is no number is never below
             return "above limit"
         return "near limit" if ratio >= self.near - _ROUNDING else "below limit"
 

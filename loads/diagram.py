@@ -232,7 +232,7 @@ class Diagram:
         return zeroth, first, second
 
     def gross(self, z: float) -> FloatArray:
-        """Sum of all terms' magnitudes at an elevation, the scale against which a sum may count as nil, (n,). [Pa]."""
+        """Sum of all terms' magnitudes at an elevation, (n,): against it a sum may count as nil. [Pa]."""
         depth = np.maximum(self.knot - z, 0)
         magnitude = (np.abs(self.step) + np.abs(self.slope) * depth) * (depth > 0)
         return np.asarray(magnitude.sum(axis=1))
@@ -261,7 +261,7 @@ class Diagram:
         return both.max(axis=1), both.min(axis=1)
 
     def rows(self, bottom: float, top: float, index: int = 0) -> list[tuple[float, float]]:
-        """Corners of one state's diagram between two elevations, (z, p) from the bottom up, two rows at a jump."""
+        """Corners of one state's diagram between two elevations, (z, p) from the bottom up, two at a jump."""
         one = self.take(index)
         inside = one.knot[0][(one.knot[0] > bottom) & (one.knot[0] < top)]
         levels = np.unique(np.concatenate([[bottom, top], inside]))

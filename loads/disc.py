@@ -1,4 +1,4 @@
-"""Parts of a circle to full accuracy, however thin: the segment of a disc, and the strip between chord and arc."""
+"""Parts of a circle to full accuracy, however thin: a disc's segment, the area from chord to arc."""
 
 from __future__ import annotations
 

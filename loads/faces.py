@@ -259,8 +259,8 @@ class ArcFace:
 
         Notes
         -----
-        Horizontal: the vertical projection. Vertical: −b∫p dx, the weight of the real or imaginary fluid above;
-        a ramp that starts at the height h takes the prism ∫x dy from the bottom edge up to h.
+        Horizontal: the vertical projection. Vertical: −b∫p dx, the weight of the real or imaginary fluid
+        above; a ramp that starts at the height h takes the prism ∫x dy from the bottom edge up to h.
         All pressures point through the centre, so the moment about it is nil and the moment about the bottom
         edge is that of the resultant placed at the centre.
         """

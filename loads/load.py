@@ -36,7 +36,7 @@ class Load:
 
 @dataclass(frozen=True, kw_only=True)
 class Setting:
-    """Everything that loads a barrier from outside: levels, fluids and its sediment."""
+    """Everything that loads a barrier from outside: levels, fluids, and the face with its sediment."""
 
     levels: Levels
     fluids: dict[str, Fluid]

@@ -53,6 +53,30 @@ class Recheck:
     agrees: BoolArray
 
 
+@dataclass(frozen=True, kw_only=True)
+class _Ground:
+    """What stands and lies against one side of the face."""
+
+    layers: Sequence[Sediment]
+    level: FloatArray
+    water_unit_weight: float
+    tilt: float
+    bottom: float
+
+    def foot(self, index: int) -> float:
+        return self.layers[index + 1].top.value if index + 1 < len(self.layers) else self.bottom
+
+
+def _ground(setting: Setting, side: str) -> _Ground:
+    return _Ground(
+        layers=setting.panel.layers(side),
+        level=setting.levels.of(side)[:, None],
+        water_unit_weight=setting.fluids[side].unit_weight,
+        tilt=tilt_from(side, setting.panel.tilt_angle),
+        bottom=setting.panel.bottom.value,
+    )
+
+
 def pressure_at(setting: Setting, z: FloatArray) -> FloatArray:
     """Net pressure from the definition of each load.
 
@@ -70,65 +94,41 @@ def pressure_at(setting: Setting, z: FloatArray) -> FloatArray:
     """
     total = np.zeros_like(z)
     for side in SIDES:
-        level = setting.levels.of(side)[:, None]
-        weight = setting.fluids[side].unit_weight
-        total += TOWARD[side] * weight * np.maximum(level - z, 0.0)
-        tilt = tilt_from(side, setting.panel.tilt_angle)
-        layers = setting.panel.layers(side)
-        for index, _ in enumerate(layers):
-            part = _layer_pressure(layers, index, z, level, weight, tilt, setting.panel.bottom.value)
-            total += TOWARD[side] * part
+        ground = _ground(setting, side)
+        total += TOWARD[side] * ground.water_unit_weight * np.maximum(ground.level - z, 0.0)
+        for index, _ in enumerate(ground.layers):
+            total += TOWARD[side] * _layer_pressure(ground, index, z)
     return total
 
 
-def _layer_pressure(
-    layers: Sequence[Sediment],
-    index: int,
-    z: FloatArray,
-    level: FloatArray,
-    water_unit_weight: float,
-    tilt: float,
-    bottom: float,
-) -> FloatArray:
-    layer = layers[index]
-    head, foot = layer.top.value, _foot(layers, index, bottom)
+def _layer_pressure(ground: _Ground, index: int, z: FloatArray) -> FloatArray:
+    layer = ground.layers[index]
+    head, foot = layer.top.value, ground.foot(index)
     if layer.is_fluid:
         assert layer.fluid_unit_weight is not None
         mud = layer.fluid_unit_weight.value * np.clip(head - z, 0.0, head - foot)
-        water = water_unit_weight * np.maximum(np.minimum(level, head) - np.maximum(z, foot), 0.0)
-        return np.asarray(mud - water)
-    raw = _unfloored(layers, index, z, level, water_unit_weight, tilt, bottom)
+        wet = np.maximum(np.minimum(ground.level, head) - np.maximum(z, foot), 0.0)
+        return np.asarray(mud - ground.water_unit_weight * wet)
     inside = (z < head) & (z >= foot)
-    return np.asarray(np.where(inside, np.maximum(raw, 0.0), 0.0))
+    return np.asarray(np.where(inside, np.maximum(_unfloored(ground, index, z), 0.0), 0.0))
 
 
-def _unfloored(
-    layers: Sequence[Sediment],
-    index: int,
-    z: FloatArray,
-    level: FloatArray,
-    water_unit_weight: float,
-    tilt: float,
-    bottom: float,
-) -> FloatArray:
+def _unfloored(ground: _Ground, index: int, z: FloatArray) -> FloatArray:
     """K σ′v − 2c√K as if tension could act, with σ′v summed over everything above z."""
-    stress = np.full_like(z, layers[0].surcharge.value if layers[0].surcharge else 0.0)
+    load = ground.layers[0].surcharge
+    stress = np.full_like(z, load.value if load else 0.0)
     for number in range(index + 1):
-        over = layers[number]
+        over = ground.layers[number]
         if over.is_fluid:
             continue
-        moist, submerged = unit_weights(over, water_unit_weight)
+        moist, submerged = unit_weights(over, ground.water_unit_weight)
         head = over.top.value
-        foot = np.maximum(z, _foot(layers, number, bottom))
-        wet = np.maximum(np.minimum(level, head) - foot, 0.0)
+        foot = np.maximum(z, ground.foot(number))
+        wet = np.maximum(np.minimum(ground.level, head) - foot, 0.0)
         whole = np.maximum(head - foot, 0.0)
         stress = stress + moist * (whole - wet) + submerged * wet
-    coefficient = face_coefficient(layers[index], tilt)
-    return coefficient * stress - cohesion_pressure(layers[index], coefficient)
-
-
-def _foot(layers: Sequence[Sediment], index: int, bottom: float) -> float:
-    return layers[index + 1].top.value if index + 1 < len(layers) else bottom
+    coefficient = face_coefficient(ground.layers[index], ground.tilt)
+    return coefficient * stress - cohesion_pressure(ground.layers[index], coefficient)
 
 
 def _breaks(setting: Setting, bottom: float, top: float, corners: FloatArray) -> FloatArray:
@@ -140,36 +140,34 @@ def _breaks(setting: Setting, bottom: float, top: float, corners: FloatArray) ->
         layers = setting.panel.layers(side)
         columns += [np.full(states, layer.top.value) for layer in layers]
     rough = np.sort(np.clip(np.column_stack(columns), bottom, top), axis=1)
-    extra = [column for side in SIDES for column in _zero_columns(setting, side, rough)]
+    extra = [column for side in SIDES for column in _zero_columns(_ground(setting, side), rough)]
     return np.sort(np.concatenate([rough, *extra], axis=1), axis=1) if extra else rough
 
 
-def _zero_columns(setting: Setting, side: str, rough: FloatArray) -> list[FloatArray]:
-    """Elevations at which a cohesive layer's pressure passes through zero, within each piece."""
-    layers = setting.panel.layers(side)
-    level = setting.levels.of(side)[:, None]
-    weight = setting.fluids[side].unit_weight
+def _zero_columns(ground: _Ground, rough: FloatArray) -> list[FloatArray]:
+    """Elevations at which a layer's pressure passes through zero, within each piece."""
     columns = []
-    for index, layer in enumerate(layers):
-        if layer.is_fluid or not _may_be_tension(layers[: index + 1], weight):
+    middle = (rough[:, :-1] + rough[:, 1:]) / 2
+    span = rough[:, 1:] - rough[:, :-1]
+    for index, _ in enumerate(ground.layers):
+        if not _may_be_tension(ground, index):
             continue
-        middle = (rough[:, :-1] + rough[:, 1:]) / 2
-        span = rough[:, 1:] - rough[:, :-1]
-        tilt = tilt_from(side, setting.panel.tilt_angle)
-        bottom = setting.panel.bottom.value
-        lower = _unfloored(layers, index, middle - span / 4, level, weight, tilt, bottom)
-        upper = _unfloored(layers, index, middle + span / 4, level, weight, tilt, bottom)
+        lower = _unfloored(ground, index, middle - span / 4)
+        upper = _unfloored(ground, index, middle + span / 4)
         slope = np.where(span > 0, (lower - upper) / np.where(span > 0, span / 2, 1.0), 0.0)
         shift = np.where(slope != 0, (lower + upper) / 2 / np.where(slope != 0, slope, 1.0), 0.0)
         columns.append(np.clip(middle + shift, rough[:, :-1], rough[:, 1:]))
     return columns
 
 
-def _may_be_tension(layers: Sequence[Sediment], water_unit_weight: float) -> bool:
-    """Whether the lowest of these layers may have to be cut off at zero: cohesion, or soil lighter than water."""
-    cohesion = layers[-1].cohesion
-    light = any(not over.is_fluid and unit_weights(over, water_unit_weight)[1] < 0 for over in layers)
-    return light or (cohesion is not None and cohesion.value > 0)
+def _may_be_tension(ground: _Ground, index: int) -> bool:
+    """Whether a layer may come out as tension: it has cohesion, or soil is lighter than water."""
+    layer = ground.layers[index]
+    if layer.is_fluid:
+        return False
+    soils = [over for over in ground.layers[: index + 1] if not over.is_fluid]
+    light = any(unit_weights(over, ground.water_unit_weight)[1] < 0 for over in soils)
+    return light or (layer.cohesion is not None and layer.cohesion.value > 0)
 
 
 def _points(breaks: FloatArray, nodes: FloatArray, weights: FloatArray) -> tuple[FloatArray, FloatArray]:

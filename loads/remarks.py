@@ -6,15 +6,15 @@ import math
 
 import numpy as np
 
+from loads.density import SUSPENDED_SEDIMENT
 from loads.earth_pressure import OVERCONSOLIDATION_RATIO
 from loads.earth_pressure_coulomb import ACTIVE_WALL_FRICTION_SHARE, PASSIVE_WALL_FRICTION_SHARE
-from loads.density import SUSPENDED_SEDIMENT
 from loads.faces import ArcFace, CircleFace, StripFace
 from loads.limits_of_use import outside
 from loads.load import SIDES, Setting, layer_name
 
 PLAUSIBLE_HEAD = 15.0
-"""Head above which a level is more likely a wrong datum or unit than a flood; common practice, no source. [m]"""
+"""Head above which a level is more likely a wrong datum than a flood; common practice, no source. [m]"""
 
 
 def remarks_on(setting: Setting, face: StripFace | CircleFace | ArcFace, index: int = 0) -> tuple[str, ...]:
@@ -33,12 +33,13 @@ def _level_remarks(setting: Setting, face: StripFace | CircleFace | ArcFace, ind
         level = float(setting.levels.of(side)[index])
         if level > face.top:
             remarks.append(
-                f"Water on the {side} side stands over the top: the pressure diagram is cut off at the top, and "
-                "falling water, scour and debris are not counted."
+                f"Water on the {side} side stands over the top: the pressure diagram is cut off at the top, "
+                "and falling water, scour and debris are not counted."
             )
         if level - face.bottom > PLAUSIBLE_HEAD:
             remarks.append(
-                f"The {side}-side level is more than 15 m (49 ft) above the bottom: check the datum and the unit."
+                f"The {side}-side level is more than 15 m (49 ft) above the bottom: check the datum and the "
+                "unit."
             )
     if setting.levels.protected_side[index] > setting.levels.flood_side[index]:
         remarks.append(
@@ -58,12 +59,13 @@ def _sediment_remarks(setting: Setting) -> list[str]:
                 )
             if layer.pressure == "passive":
                 remarks.append(
-                    f"{name}: passive pressure needs movement to build up and can be scoured away; how much of "
-                    "it may be relied on is for the engineer."
+                    f"{name}: passive pressure needs movement to build up and can be scoured away; how much "
+                    "of it may be relied on is for the engineer."
                 )
             if layer.pressure == "active":
                 remarks.append(
-                    f"{name}: active pressure holds only where the face can give way; a stiff face takes at rest."
+                    f"{name}: active pressure holds only where the face can give way; a stiff face takes at "
+                    "rest."
                 )
             if layer.friction_angle and layer.wall_friction and layer.friction_angle.value > 0:
                 share = np.array([layer.wall_friction.value / layer.friction_angle.value])
@@ -77,7 +79,8 @@ def _sediment_remarks(setting: Setting) -> list[str]:
                 remarks.append(f"{name}: overconsolidation ratio outside the formula's published range.")
     if setting.panel.sediment and abs(setting.panel.tilt_angle - math.pi / 2) > 1e-9:
         remarks.append(
-            "Soil on an inclined face: the pressure normal to the face is counted, the friction along it is not."
+            "Soil on an inclined face: the pressure normal to the face is counted, the friction along it is "
+            "not."
         )
     return remarks
 
@@ -97,7 +100,8 @@ def _rated_level_remarks(setting: Setting) -> list[str]:
 def _density_remarks(setting: Setting) -> list[str]:
     weights = {side: setting.fluids[side].unit_weight for side in SIDES}
     remarks = [
-        f"The {side}-side water is heavier than the formula for suspended sediment is meant for: it may be mud."
+        f"The {side}-side water is heavier than the formula for suspended sediment is meant for: it may be "
+        "mud."
         for side, weight in weights.items()
         if weight > (1000 + 0.63 * SUSPENDED_SEDIMENT.high) * 9.80665
     ]

@@ -184,7 +184,7 @@ def _shown(value: object) -> str:
     return f'"{_shortened(value)}"' if isinstance(value, str) else _shortened(str(value))
 
 
-def _wording(item: Any, loc: Sequence[int | str]) -> dict[str, str]:  # noqa: ANN401 - pydantic's own dict
+def _wording(item: Any, loc: Sequence[int | str]) -> dict[str, str]:
     kind, context = item["type"], item.get("ctx", {})
     if kind == "missing":
         return {"value": "", "rule": "is missing"}
@@ -237,7 +237,7 @@ def _known_keys(loc: Sequence[int | str]) -> list[str]:
     return list(record.model_fields) if isinstance(record, type) and issubclass(record, Record) else []
 
 
-def _record_within(annotation: Any) -> Any:  # noqa: ANN401 - any type expression
+def _record_within(annotation: Any) -> Any:
     if isinstance(annotation, type) and issubclass(annotation, Record):
         return annotation
     for argument in getattr(annotation, "__args__", ()):

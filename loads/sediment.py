@@ -105,13 +105,13 @@ def sediment_diagrams(
     Returns
     -------
     list of Diagram
-        One for each layer. A soil layer's is effective pressure K σ′v − 2c′√K, not below zero; a fluid layer's
-        is its pressure less that of the water which it replaces.
+        One for each layer. A soil layer's is effective pressure K σ′v − 2c′√K, not below zero; a fluid
+        layer's is its pressure less that of the water which it replaces.
 
     Notes
     -----
-    Pore water stands at the side's level. A fluid layer's excess pressure carries on undiminished below it, and
-    effective stress starts from nothing there.
+    Pore water stands at the side's level. A fluid layer's excess pressure carries on undiminished below it,
+    and effective stress starts from nothing there.
     """
     bottoms = [layer.top.value for layer in layers[1:]] + [bottom] * bool(layers)
     diagrams = []
@@ -142,7 +142,7 @@ def sediment_diagrams(
 
 
 def _floored_piece(start: FloatArray, slope: float, upper: FloatArray, lower: FloatArray) -> list[Term]:
-    """Terms of a straight piece of pressure between two elevations, taken as nil where it would be tension."""
+    """Terms of a straight piece of pressure between two elevations, nil where it would be tension."""
     end = start + slope * (upper - lower)
     grade = np.divide(start, slope, out=np.zeros_like(start), where=np.full_like(start, slope) != 0)
     zero = np.clip(upper + grade, lower, upper)

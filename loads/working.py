@@ -53,22 +53,12 @@ def _heads(barrier: Assessed, index: int) -> Step:
         term("z₁", "top edge", face.top, "elevation"),
     ]
     lines, results = [], []
-    if not isinstance(face, ArcFace):
-        sine = math.sin(face.tilt)
-        if abs(face.tilt - math.pi / 2) > 1e-12:
-            terms += [
-                term("ℓ", "height along the face", face.length, "length"),
-                term("θ", "tilt, from the protected-side horizontal to the face", face.tilt, "angle"),
-            ]
-            lines.append(
-                line(
-                    "z₁ = z₀ + ℓ·sin θ = {} + {}·sin {} = {}",
-                    (face.bottom, "elevation"),
-                    (face.length, "length"),
-                    (face.tilt, "angle"),
-                    (face.bottom + face.length * sine, "elevation"),
-                )
-            )
+    if not isinstance(face, ArcFace) and abs(face.tilt - math.pi / 2) > 1e-12:
+        terms += [
+            term("ℓ", "height along the face", face.length, "length"),
+            term("θ", "tilt, from the protected-side horizontal to the face", face.tilt, "angle"),
+        ]
+        lines.append(_top_line(face))
     for side, mark in zip(SIDES, ("f", "p"), strict=True):
         level = float(barrier.levels.of(side)[index])
         weight = barrier.setting.fluids[side].unit_weight
@@ -88,6 +78,16 @@ def _heads(barrier: Assessed, index: int) -> Step:
     formula = "h = L − z₀; nil where the level is below the bottom edge or the side is dry"
     return Step(
         title="Heads", formula=formula, terms=tuple(terms), lines=tuple(lines), results=tuple(results)
+    )
+
+
+def _top_line(face: StripFace | CircleFace) -> Line:
+    return line(
+        "z₁ = z₀ + ℓ·sin θ = {} + {}·sin {} = {}",
+        (face.bottom, "elevation"),
+        (face.length, "length"),
+        (face.tilt, "angle"),
+        (face.top, "elevation"),
     )
 
 

@@ -139,43 +139,29 @@ def _prism(barrier: Assessed, face: ArcFace, index: int) -> Step:
 
 def _resultant(barrier: Assessed, face: ArcFace, projection: Step, index: int) -> Step:
     found, arc = barrier.resultant, face.shape
-    horizontal, vertical = float(found.horizontal[index]), float(found.vertical[index])
-    moment, total = float(found.moment[index]), float(found.total[index])
+    horizontal, vertical, moment, total, height = (
+        float(values[index])
+        for values in (found.horizontal, found.vertical, found.moment, found.total, found.line_of_action)
+    )
+    H, V, M = (horizontal, "force"), (vertical, "force"), (moment, "moment")
+    centre = ((arc.centre_z, "length"), (arc.centre_x, "length"))
+    sides = ((abs(horizontal), "force"), (abs(vertical), "force"))
     lines = [
-        line(
-            "M = H·ζ_c − V·x_c = {}·({}) − ({})·({}) = {}",
-            (horizontal, "force"),
-            (arc.centre_z, "length"),
-            (vertical, "force"),
-            (arc.centre_x, "length"),
-            (moment, "moment"),
-        ),
-        line(
-            "F = √(H² + V²) = √({}² + {}²) = {}",
-            (abs(horizontal), "force"),
-            (abs(vertical), "force"),
-            (abs(total), "force"),
-        ),
+        line("M = H·ζ_c − V·x_c = {}·({}) − ({})·({}) = {}", H, centre[0], V, centre[1], M),
+        line("F = √(H² + V²) = √({}² + {}²) = {}", *sides, (abs(total), "force")),
     ]
     results = [
-        term("H", "horizontal force, toward the protected side", horizontal, "force"),
-        term("V", "vertical force, up", vertical, "force"),
+        term("H", "horizontal force, toward the protected side", *H),
+        term("V", "vertical force, up", *V),
         term("F", "total force, with the sign of H", total, "force"),
-        term("M", "moment about the bottom edge", moment, "moment"),
+        term("M", "moment about the bottom edge", *M),
     ]
-    height = float(found.line_of_action[index])
     if not math.isnan(height):
         assert projection.table is not None
-        lines.append(
-            line(
-                "z_F = z₀ + ΣΔT/H = {} + {}/{} = {}",
-                (face.bottom, "elevation"),
-                (float(projection.table.total[5]), "moment"),
-                (horizontal, "force"),
-                (height, "elevation"),
-            )
-        )
-        results.append(term("z_F", "line of action of H", height, "elevation"))
+        turn = (float(projection.table.total[5]), "moment")
+        z = (height, "elevation")
+        lines.append(line("z_F = z₀ + ΣΔT/H = {} + {}/{} = {}", (face.bottom, "elevation"), turn, H, z))
+        results.append(term("z_F", "line of action of H", *z))
     return Step(
         title="Force and moment",
         formula="H = ΣΔH, V = ΣΔV; every pressure points through the centre, so H and V act there",

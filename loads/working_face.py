@@ -50,20 +50,7 @@ def slices(barrier: Assessed, face: StripFace, index: int) -> Step:
     """Force and moment of each slice of a face with a straight outline."""
     sine = math.sin(face.tilt)
     edges = [face.bottom + float(s) * sine for s in face.strip_table[:, :2].ravel()]
-    rows: list[tuple[Cell, ...]] = []
-    for low, high, p_low, p_high in straight_pieces(barrier, edges, index):
-        s_low, s_high = (low - face.bottom) / sine, (high - face.bottom) / sine
-        b_low, b_high = _width(face, s_low, s_high)
-        points = (
-            (p_low, b_low, s_low, 1),
-            ((p_low + p_high) / 2, (b_low + b_high) / 2, (s_low + s_high) / 2, 4),
-            (p_high, b_high, s_high, 1),
-        )
-        sixth = (s_high - s_low) / 6
-        force = sixth * sum(weight * p * b for p, b, _, weight in points)
-        moment = sixth * sum(weight * p * b * s for p, b, s, weight in points)
-        rows.append((s_low, s_high, p_low, p_high, b_low, b_high, force, moment))
-    rows.reverse()
+    rows = [_slice(face, piece) for piece in reversed(straight_pieces(barrier, edges, index))]
     headings = (
         ("s₁, lower end", "length"),
         ("s₂, upper end", "length"),
@@ -74,7 +61,7 @@ def slices(barrier: Assessed, face: StripFace, index: int) -> Step:
         ("force ΔN", "force"),
         ("moment ΔM", "moment"),
     )
-    total = ("sum", "", "", "", "", "", column_sum(rows, 6), column_sum(rows, 7))
+    sums = ("sum", "", "", "", "", "", column_sum(rows, 6), column_sum(rows, 7))
     upright = abs(face.tilt - math.pi / 2) < 1e-12
     along = "s = z − z₀, up the face" if upright else "s = (z − z₀)/sin θ, up the face"
     return Step(
@@ -85,8 +72,24 @@ def slices(barrier: Assessed, face: StripFace, index: int) -> Step:
             "exact for straight p and b"
         ),
         lines=tuple(_slice_lines(rows)),
-        table=Table(headings=headings, rows=tuple(rows), total=total),
+        table=Table(headings=headings, rows=tuple(rows), total=sums),
     )
+
+
+def _slice(face: StripFace, piece: Piece) -> tuple[Cell, ...]:
+    low, high, p_low, p_high = piece
+    sine = math.sin(face.tilt)
+    s_low, s_high = (low - face.bottom) / sine, (high - face.bottom) / sine
+    b_low, b_high = _width(face, s_low, s_high)
+    points = (
+        (p_low, b_low, s_low, 1),
+        ((p_low + p_high) / 2, (b_low + b_high) / 2, (s_low + s_high) / 2, 4),
+        (p_high, b_high, s_high, 1),
+    )
+    sixth = (s_high - s_low) / 6
+    force = sixth * sum(weight * p * b for p, b, _, weight in points)
+    moment = sixth * sum(weight * p * b * s for p, b, s, weight in points)
+    return (s_low, s_high, p_low, p_high, b_low, b_high, force, moment)
 
 
 def _slice_lines(rows: list[tuple[Cell, ...]]) -> list[Line]:

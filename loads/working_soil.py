@@ -19,7 +19,7 @@ def soil_steps(barrier: Assessed, index: int) -> list[Step]:
     """Steps of the sediment of both sides; none where there is none."""
     steps: list[Step] = []
     for side in SIDES:
-        layers = barrier.panel.layers(side)
+        layers = barrier.record.layers(side)
         soils = [(number, layer) for number, layer in enumerate(layers, 1) if not layer.is_fluid]
         if soils:
             steps.append(_coefficients(barrier, side, soils))
@@ -30,7 +30,7 @@ def soil_steps(barrier: Assessed, index: int) -> list[Step]:
 
 
 def _coefficients(barrier: Assessed, side: str, soils: list[tuple[int, Sediment]]) -> Step:
-    tilt = tilt_from(side, barrier.panel.tilt_angle)
+    tilt = tilt_from(side, barrier.record.tilt_angle)
     water = barrier.setting.fluids[side].unit_weight
     lines: list[Line] = []
     for number, layer in soils:
@@ -110,67 +110,28 @@ def _wedge_lines(layer: Sediment, tilt: float, ratio: float, label: str) -> list
     more = (friction[0] + delta, "angle")
     thrust = (batter + sign * delta, "angle")
     root = math.sqrt(math.sin(more[0]) * math.sin(friction[0]) / (math.cos(thrust[0]) * math.cos(batter)))
-    wedge = ratio / (math.cos(delta) * math.sin(tilt))
+    wedge = (ratio / (math.cos(delta) * math.sin(tilt)), "ratio")
     minus, plus = ("−", "+") if active else ("+", "−")
     coefficient = "K_a" if active else "K_p"
+    w, result = (root, "ratio"), (ratio, "ratio")
+    slip = (
+        f"w = √[sin(φ′ + δ)·sin φ′/(cos(η {plus} δ)·cos η)] = √[sin {{}}·sin {{}}/(cos {{}}·cos {{}})] = {{}}"
+    )
+    whole = (
+        f"{coefficient} = cos²(φ′ {minus} η)/[cos²η·cos(η {plus} δ)·(1 {plus} w)²] "
+        f"= (cos {{}})²/[(cos {{}})²·cos {{}}·(1 {plus} {{}})²] = {{}}"
+    )
+    normal = f"K = {coefficient}·cos δ·sin θ = {{}}·cos {{}}·sin {{}} = {{}}"
+    name = f"{label}, batter η = 90° − θ, level ground"
     return [
-        line(
-            f"w = √[sin(φ′ + δ)·sin φ′/(cos(η {plus} δ)·cos η)] "
-            "= √[sin {}·sin {}/(cos {}·cos {})] = {}",
-            more,
-            friction,
-            thrust,
-            lean,
-            (root, "ratio"),
-            label=f"{label}, batter η = 90° − θ, level ground",
-        ),
-        line(
-            f"{coefficient} = cos²(φ′ {minus} η)/[cos²η·cos(η {plus} δ)·(1 {plus} w)²] "
-            f"= (cos {{}})²/[(cos {{}})²·cos {{}}·(1 {plus} {{}})²] = {{}}",
-            less,
-            lean,
-            thrust,
-            (root, "ratio"),
-            (wedge, "ratio"),
-            label=label,
-        ),
-        line(
-            f"K = {coefficient}·cos δ·sin θ = {{}}·cos {{}}·sin {{}} = {{}}",
-            (wedge, "ratio"),
-            wall,
-            (tilt, "angle"),
-            (ratio, "ratio"),
-            label=label,
-        ),
+        line(slip, more, friction, thrust, lean, w, label=name),
+        line(whole, less, lean, thrust, w, wedge, label=label),
+        line(normal, wedge, wall, (tilt, "angle"), result, label=label),
     ]
 
 
 def _stresses(barrier: Assessed, side: str, index: int) -> Step:
-    panel = barrier.panel
-    layers = panel.layers(side)
-    level = float(barrier.levels.of(side)[index])
-    water = barrier.setting.fluids[side].unit_weight
-    tilt = tilt_from(side, panel.tilt_angle)
-    feet = [layer.top.value for layer in layers[1:]] + [panel.bottom.value]
-    stress = layers[0].surcharge.value if layers[0].surcharge else 0.0
-    terms = [term("q", "surcharge on the ground", stress, "pressure")] if stress else []
-    rows: list[tuple[Cell, ...]] = []
-    for number, (layer, foot) in enumerate(zip(layers, feet, strict=True), 1):
-        if layer.is_fluid:
-            continue
-        ratio = face_coefficient(layer, tilt)
-        taken = cohesion_pressure(layer, ratio)
-        head = layer.top.value
-        table = float(np.clip(level, foot, head))
-        moist, submerged = unit_weights(layer, water)
-        for weight, upper, lower in ((moist, head, table), (submerged, table, foot)):
-            if upper - lower <= 0:
-                continue
-            below = stress + weight * (upper - lower)
-            pressures = (max(ratio * value - taken, 0.0) for value in (stress, below))
-            name = layer_name(layer, number, side).partition(",")[0]
-            rows.append((name, upper, lower, weight, stress, below, ratio, taken, *pressures))
-            stress = below
+    ground = barrier.record.layers(side)[0].surcharge
     headings = (
         ("layer", "text"),
         ("from z", "elevation"),
@@ -187,28 +148,60 @@ def _stresses(barrier: Assessed, side: str, index: int) -> Step:
         title=f"Sediment on the {side} side: effective stress and pressure",
         formula=(
             "σ′v at the foot = σ′v at the top + γ·Δz, from the top down; γ above water, γ′ below; "
-            "p = K·σ′v − 2c′√K, not below zero; the water's pressure is counted apart"
+            "p = K·σ′v − 2c′√K, not below zero; cohesion of passive soil adds, so its 2c′√K is negative; "
+            "the water's pressure is counted apart"
         ),
-        terms=tuple(terms),
-        table=Table(headings=headings, rows=tuple(rows)),
+        terms=(term("q", "surcharge on the ground", ground.value, "pressure"),) if ground else (),
+        table=Table(headings=headings, rows=tuple(_stress_rows(barrier, side, index))),
     )
 
 
-def _fluid_layers(barrier: Assessed, side: str, index: int) -> Step:
-    panel = barrier.panel
-    layers = panel.layers(side)
+def _feet(barrier: Assessed, side: str) -> list[tuple[str, Sediment, float]]:
+    """Layers of one side, each with its short name and the elevation of its foot."""
+    layers = barrier.record.layers(side)
+    feet = [layer.top.value for layer in layers[1:]] + [barrier.record.bottom.value]
+    return [
+        (layer_name(layer, number, side).removesuffix(f", {side} side"), layer, foot)
+        for number, (layer, foot) in enumerate(zip(layers, feet, strict=True), 1)
+    ]
+
+
+def _stress_rows(barrier: Assessed, side: str, index: int) -> list[tuple[Cell, ...]]:
     level = float(barrier.levels.of(side)[index])
     water = barrier.setting.fluids[side].unit_weight
-    feet = [layer.top.value for layer in layers[1:]] + [panel.bottom.value]
+    tilt = tilt_from(side, barrier.record.tilt_angle)
+    ground = barrier.record.layers(side)[0].surcharge
+    stress = ground.value if ground else 0.0
     rows: list[tuple[Cell, ...]] = []
-    for number, (layer, foot) in enumerate(zip(layers, feet, strict=True), 1):
+    for name, layer, foot in _feet(barrier, side):
+        if layer.is_fluid:
+            continue
+        ratio = face_coefficient(layer, tilt)
+        taken = cohesion_pressure(layer, ratio)
+        head = layer.top.value
+        table = float(np.clip(level, foot, head))
+        moist, submerged = unit_weights(layer, water)
+        for weight, upper, lower in ((moist, head, table), (submerged, table, foot)):
+            if upper - lower <= 0:
+                continue
+            below = stress + weight * (upper - lower)
+            pressures = (max(ratio * value - taken, 0.0) for value in (stress, below))
+            rows.append((name, upper, lower, weight, stress, below, ratio, taken, *pressures))
+            stress = below
+    return rows
+
+
+def _fluid_layers(barrier: Assessed, side: str, index: int) -> Step:
+    level = float(barrier.levels.of(side)[index])
+    water = barrier.setting.fluids[side].unit_weight
+    rows: list[tuple[Cell, ...]] = []
+    for name, layer, foot in _feet(barrier, side):
         if not layer.is_fluid:
             continue
         assert layer.fluid_unit_weight is not None
         weight, head = layer.fluid_unit_weight.value, layer.top.value
         wet = float(np.clip(level, foot, head)) - foot
         excess = weight * (head - foot) - water * wet
-        name = layer_name(layer, number, side).partition(",")[0]
         rows.append((name, layer.pressure, head, foot, weight, head - foot, wet, excess))
     headings = (
         ("layer", "text"),

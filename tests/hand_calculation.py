@@ -9,7 +9,7 @@ import re
 from collections.abc import Callable, Sequence
 
 from webapp.display import CHOICES, MINUS, NO_BREAK, PRINT_DIGITS, THOUSANDS, System
-from webapp.package.figures import ELEVATION_DECIMALS, POWERS, unit_of
+from webapp.step_text import ELEVATION_DECIMALS, POWERS, unit_of
 
 _SUPERSCRIPTS = {"²": "**2", "³": "**3", "⁴": "**4"}
 _OPERATORS: dict[type[ast.AST], Callable[..., float]] = {

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import math
+from itertools import pairwise
 from typing import Any
 
 import numpy as np
@@ -55,3 +57,26 @@ def sediment_alone(barrier: Assessed) -> Resultant:
 def arm(found: Resultant) -> float:
     """Distance of the resultant of a plane face from its bottom edge, along the face. [m]."""
     return float(found.moment[0] / found.total[0])
+
+
+def along_chords(points: list[tuple[float, float]], width: str) -> list[dict[str, Any]]:
+    """Plane panels from point to point of a curved face, (x toward the protected side, z up) in metres."""
+    panels = []
+    for (x, z), (next_x, next_z) in pairwise(points):
+        tilt = math.degrees(math.atan2(next_z - z, next_x - x))
+        size = {"width": width, "height": f"{math.hypot(next_x - x, next_z - z)!r} m"}
+        panels.append({"bottom": f"{z!r} m", "tilt": f"{tilt!r} deg", **size})
+    return panels
+
+
+def chain_force(points: list[tuple[float, float]], width: str, **water: Any) -> tuple[float, float, float]:
+    """Horizontal and vertical force, and moment about the first point, of panels from point to point."""
+    barriers = assess(filed(scene(*along_chords(points, width), **water))).barriers
+    parts = [barrier.resultant for barrier in barriers if isinstance(barrier, Assessed)]
+    assert len(parts) == len(points) - 1
+    across, up, turning = 0.0, 0.0, 0.0
+    for (x, z), part in zip(points, parts, strict=False):
+        across += float(part.horizontal[0])
+        up += float(part.vertical[0])
+        turning += float(part.moment[0] + part.horizontal[0] * z - part.vertical[0] * x)
+    return across, up, turning

@@ -16,7 +16,7 @@ from loads.working import working
 from tests.hand_calculation import calculator, number_of, redo, rounding
 from tests.lines import documents
 from webapp.display import System
-from webapp.package.figures import figure, in_working_unit, line_text, table_cells
+from webapp.step_text import figure, in_working_unit, line_text, table_cells
 
 DOCUMENTS = documents()
 REFERENCE = 1e-9
@@ -25,7 +25,7 @@ REFERENCE = 1e-9
 def barriers(name: str) -> Iterator[tuple[Assessed, System]]:
     assessment = assess(scenario_of(DOCUMENTS[name]))
     for barrier in assessment.barriers:
-        assert isinstance(barrier, Assessed), barrier.panel.name
+        assert isinstance(barrier, Assessed), barrier.record.name
         yield barrier, assessment.scenario.units
 
 
@@ -89,7 +89,7 @@ def test_every_substituted_line_is_redone_from_its_printed_figures(name: str) ->
                     count += 1
                     difference, tolerance = outcome
                     text = line_text(line, system)
-                    assert difference <= tolerance, f"{barrier.panel.id}: {text}: {difference} > {tolerance}"
+                    assert difference <= tolerance, f"{barrier.record.id}: {text}: {difference} > {tolerance}"
     assert count > 5
 
 

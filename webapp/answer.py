@@ -8,7 +8,7 @@ from collections.abc import Mapping
 from typing import Any
 
 from loads import __version__
-from loads.assessment import Assessed, Assessment, Barrier, assess
+from loads.assessment import Assessed, Assessment, Barrier, Withheld, assess
 from loads.cautions import CAUTIONS
 from loads.checks import Check
 from loads.document import input_digest
@@ -17,7 +17,7 @@ from loads.records.base import read_date
 from loads.scenario_file import Document, parse_document, scenario_of
 from loads.states import Levels
 from loads.units import SI_UNITS
-from loads.working import Term, working
+from loads.working import Step, Term, working
 
 SCHEMA = "sillhead/1"
 
@@ -93,41 +93,38 @@ def answer(assessment: Assessment, document: Mapping[str, object], index: int = 
 
 def _barrier(barrier: Barrier, index: int) -> dict[str, Any]:
     head = {
-        "id": barrier.panel.id,
+        "id": barrier.record.id,
         "kind": "panel",
-        "name": barrier.panel.name,
+        "name": barrier.record.name,
         "verdict": barrier.verdict(index),
         "levels": _levels(barrier.setting.levels, index),
         "rated_level": _rated_level(barrier),
     }
-    if not isinstance(barrier, Assessed):
-        disagreement = {
+    return {**head, **(_results(barrier, index) if isinstance(barrier, Assessed) else _withheld(barrier))}
+
+
+def _withheld(barrier: Withheld) -> dict[str, Any]:
+    return {
+        "load": None,
+        "recheck": {
             "agrees": False,
             "largest_difference": barrier.difference,
             "first": {"horizontal": barrier.first[0], "moment": barrier.first[1]},
             "second": {"horizontal": barrier.second[0], "moment": barrier.second[1]},
-        }
-        nothing: dict[str, Any] = {
-            "diagram": [],
-            "parts": [],
-            "checks": [],
-            "first_limit": None,
-            "remarks": [],
-        }
-        return {**head, "load": None, "recheck": disagreement, **nothing}
-    face, found = barrier.face, barrier.resultant
-    rows = barrier.diagram.rows(face.bottom, face.top, index)
-    return {
-        **head,
-        "load": {
-            **_resultant(found, index),
-            "about": {"x": 0.0, "z": face.bottom},
-            "line_of_action": _number(found.line_of_action[index]),
-            "by_load": {
-                name: {"horizontal": float(part.horizontal[index]), "moment": float(part.moment[index])}
-                for name, part in barrier.by_load.items()
-            },
         },
+        "diagram": [],
+        "parts": [],
+        "checks": [],
+        "first_limit": None,
+        "working": [],
+        "remarks": [],
+    }
+
+
+def _results(barrier: Assessed, index: int) -> dict[str, Any]:
+    rows = barrier.diagram.rows(barrier.face.bottom, barrier.face.top, index)
+    return {
+        "load": _load(barrier, index),
         "diagram": [{"z": z, "pressure": pressure} for z, pressure in rows],
         "recheck": {
             "agrees": bool(barrier.recheck.agrees[index]),
@@ -136,16 +133,20 @@ def _barrier(barrier: Barrier, index: int) -> dict[str, Any]:
         "parts": [],
         "checks": [_check(check, index) for check in barrier.checks],
         "first_limit": _first_limit(barrier),
-        "working": [
-            {
-                "title": step.title,
-                "formula": step.formula,
-                "terms": [_term(term) for term in step.terms],
-                "results": [_term(term) for term in step.results],
-            }
-            for step in working(barrier, index)
-        ],
+        "working": [_step(step) for step in working(barrier, index)],
         "remarks": list(barrier.remarks),
+    }
+
+
+def _load(barrier: Assessed, index: int) -> dict[str, Any]:
+    return {
+        **_resultant(barrier.resultant, index),
+        "about": {"x": 0.0, "z": barrier.face.bottom},
+        "line_of_action": _number(barrier.resultant.line_of_action[index]),
+        "by_load": {
+            name: {"horizontal": float(part.horizontal[index]), "moment": float(part.moment[index])}
+            for name, part in barrier.by_load.items()
+        },
     }
 
 
@@ -154,7 +155,7 @@ def _levels(levels: Levels, index: int) -> dict[str, float | None]:
 
 
 def _rated_level(barrier: Barrier) -> dict[str, Any] | None:
-    rated = barrier.panel.rated_level
+    rated = barrier.record.rated_level
     if rated is None:
         return None
     day = read_date(rated.dated)
@@ -182,6 +183,15 @@ def _check(check: Check, index: int) -> dict[str, Any]:
         "verdict": check.verdict(index),
         "source": check.source,
         "remarks": list(check.remarks),
+    }
+
+
+def _step(step: Step) -> dict[str, Any]:
+    return {
+        "title": step.title,
+        "formula": step.formula,
+        "terms": [_term(term) for term in step.terms],
+        "results": [_term(term) for term in step.results],
     }
 
 

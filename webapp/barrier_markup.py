@@ -6,9 +6,8 @@ import math
 from collections.abc import Sequence
 
 from loads.assessment import Assessed, Withheld
-from loads.working import Step, Table, Term, working
 from webapp.display import PRINT_DIGITS, System, elevation, pedigree, show, show_all, significant
-from webapp.markup import escaped, head_on, subheading, table, verdict_mark
+from webapp.markup import escaped, head_on, table, verdict_mark
 from webapp.text_table import disagreement_text, first_limit_text
 
 
@@ -56,7 +55,7 @@ def withheld_notice(barrier: Withheld) -> str:
 
 def levels_note(barrier: Assessed, system: System) -> str:
     """Rated and first-limit level beside one another, each labelled as what it is."""
-    rated = barrier.panel.rated_level
+    rated = barrier.record.rated_level
     if rated is None:
         words = "Rated level: none entered. Ask the engineer of record."
     else:
@@ -67,15 +66,15 @@ def levels_note(barrier: Assessed, system: System) -> str:
     else:
         which = f" ({first.check}, {first.subject})" if first.level is not None else ""
         computed = (
-            f"First-limit level: {first_limit_text(barrier, system)}{which}; computed, a screening figure, never in "
-            "place of the rated level."
+            f"First-limit level: {first_limit_text(barrier, system)}{which}; computed, a screening figure, "
+            "never in place of the rated level."
         )
     agreed = barrier.recheck
     apart = float(agreed.difference[0])
     closeness = f"largest difference {apart:.0e} of the figure" if apart else "equal to rounding"
     second = (
-        f"Second computation: force {show(float(agreed.horizontal[0]), 'force', system, PRINT_DIGITS)}, moment "
-        f"{show(float(agreed.moment[0]), 'moment', system, PRINT_DIGITS)}; {closeness}."
+        f"Second computation: force {show(float(agreed.horizontal[0]), 'force', system, PRINT_DIGITS)}, "
+        f"moment {show(float(agreed.moment[0]), 'moment', system, PRINT_DIGITS)}; {closeness}."
     )
     return "".join(f'<div class="sh-note">{escaped(text)}</div>' for text in (words, computed, second))
 
@@ -125,42 +124,3 @@ def load_table(barrier: Assessed, system: System) -> str:
     rows = [list(row) for row in zip(names, *columns, strict=True)]
     headings = ("cause", "horizontal force", "vertical force", "moment about the bottom")
     return table(headings, rows, numeric={1, 2, 3}, total=True)
-
-
-def worked_steps(barrier: Assessed, system: System) -> str:
-    """Worked steps with numbers, as a reviewer follows them."""
-    return "".join(_step(number, step, system) for number, step in enumerate(working(barrier), 1))
-
-
-def _step(number: int, step: Step, system: System) -> str:
-    parts = [subheading(f"{number} {step.title}", small=True), f"<div>{escaped(step.formula)}</div>"]
-    if step.terms:
-        parts.append(_terms(step.terms, system))
-    if step.table:
-        parts.append(_step_table(step.table, system))
-    if step.results:
-        parts.append(_terms(step.results, system))
-    return "".join(parts)
-
-
-def _terms(terms: Sequence[Term], system: System) -> str:
-    rows = [
-        [escaped(term.symbol), escaped(term.meaning), show(term.value, term.kind, system, PRINT_DIGITS)]
-        for term in terms
-    ]
-    return table(("symbol", "what", "value"), rows, numeric={2})
-
-
-def _step_table(given: Table, system: System) -> str:
-    rows = [*given.rows, *([given.total] if given.total else [])]
-    columns: list[list[str]] = []
-    for position, (_, kind) in enumerate(given.headings):
-        cells = [row[position] for row in rows]
-        numbers = [cell for cell in cells if isinstance(cell, float)]
-        shown = iter(show_all(numbers, kind, system, PRINT_DIGITS) if kind != "text" else [])
-        columns.append([next(shown) if isinstance(cell, float) else escaped(cell) for cell in cells])
-    numeric = {i for i, (_, kind) in enumerate(given.headings) if kind != "text"}
-    headings = [escaped(text) for text, _ in given.headings]
-    return table(
-        headings, [list(row) for row in zip(*columns, strict=True)], numeric=numeric, total=bool(given.total)
-    )

@@ -2,6 +2,7 @@
 
 import ipaddress
 import json
+import os
 import sys
 from collections.abc import Iterator
 from contextlib import contextmanager
@@ -62,6 +63,38 @@ def check(file: Path, *, as_json: bool, flood_side: str | None, protected_side: 
         click.echo(json.dumps(answer(assessment, document), ensure_ascii=False, allow_nan=False, indent=1))
     else:
         click.echo(table_text(assessment, document))
+
+
+@main.command()
+@click.argument("file", type=click.Path(path_type=Path))
+@click.option(
+    "-o",
+    "--output",
+    type=click.Path(dir_okay=False, path_type=Path),
+    required=True,
+    help="PDF file to write; one of that name is replaced.",
+)
+def report(file: Path, output: Path) -> None:
+    """Write the calculation package of a scenario file as PDF."""
+    from loads.scenario_file import read_file  # noqa: PLC0415  keeps --help quick
+    from webapp.package import package_pdf  # noqa: PLC0415
+
+    with _messages():
+        _write_whole(output, package_pdf(read_file(file)))
+    click.echo(f"{output} written")
+
+
+def _write_whole(output: Path, content: bytes) -> None:
+    """Write a file so that it is either there as a whole or as it was before."""
+    unfinished = output.with_name(f".{output.name}.{os.getpid()}")
+    try:
+        try:
+            unfinished.write_bytes(content)
+            unfinished.replace(output)
+        finally:
+            unfinished.unlink(missing_ok=True)
+    except OSError as error:
+        raise SillheadError(f"the file {output} cannot be written: {error.strerror or error}") from error
 
 
 @main.command()

@@ -1,4 +1,4 @@
-"""How values are written for people: unit by unit system, significant figures, one definition for all outputs."""
+"""How values are written for people: units of each system, significant figures, the same in every output."""
 
 from __future__ import annotations
 
@@ -175,7 +175,7 @@ def show_all(values: Sequence[float], kind: str, system: System, digits: int = P
 
 
 def elevation(value: float, system: System, datum: str = "") -> str:
-    """Elevation with two decimals in feet and three in metres, and its datum when given; "dry" without water."""
+    """Elevation, two decimals in feet and three in metres, with its datum when given; "dry" without water."""
     if not math.isfinite(value):
         return "dry"
     decimals = 2 if system == "US" else 3

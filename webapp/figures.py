@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+from itertools import pairwise
 from typing import Any
 
 from loads.assessment import Assessed
@@ -48,7 +49,7 @@ def pressure_figure(barrier: Assessed, system: System, index: int = 0) -> dict[s
 def _filled(rows: list[tuple[float, float]]) -> list[tuple[float, float]]:
     """Corners with points between them, so that every elevation can be read."""
     points: list[tuple[float, float]] = []
-    for (low, p_low), (high, p_high) in zip(rows[:-1], rows[1:], strict=True):
+    for (low, p_low), (high, p_high) in pairwise(rows):
         count = max(1, math.ceil((high - low) / (rows[-1][0] - rows[0][0]) * 60))
         points += [
             (low + (high - low) * i / count, p_low + (p_high - p_low) * i / count) for i in range(count)

@@ -1,4 +1,4 @@
-"""Forms: which fields a record has, how they stand in a field, and how what was typed goes back into a document.
+"""Forms: which fields a record has, how they are shown, and how what was typed goes back into a document.
 
 Fields come from the records themselves, so form, file, schema and messages know the same names, meanings and
 ranges. No Streamlit.
@@ -156,8 +156,8 @@ def pedigree_shown(value: object) -> tuple[str, str]:
 def typed_value(field: Field, typed: str, before: object) -> object | None:
     """Value for the document from what stands in a field; None when the field is empty.
 
-    A value that was not changed keeps its range, source and date; a changed one drops them, since they belonged to
-    the old value.
+    A value that was not changed keeps its range, source and date; a changed one drops them, since they
+    belonged to the old value.
     """
     text = typed.strip()
     if not text:

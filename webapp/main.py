@@ -27,7 +27,7 @@ try:
 except Exception:  # whatever fails, no half a result stays without a word
     logging.getLogger("sillhead").exception("a page failed")
     st.error(
-        "This page could not be computed, and nothing above this line is to be relied on. What you entered is kept: "
-        "go to Sheets and links to save it, and report what you did last."
+        "This page could not be computed, and nothing above this line is to be relied on. What you entered "
+        "is kept: go to Sheets and links to save it, and report what you did last."
     )
 parts.write_address()

@@ -81,7 +81,8 @@ def title_block(assessment: Assessment, digest: str, now: datetime) -> str:
     age = f"levels as of {moment_text(time)}, {age_text(time, now)}" if time else "levels without a time"
     code = check_code(digest)
     return (
-        f'<div class="sh-title"><div class="sh-name" role="heading" aria-level="1">{escaped(scenario.title)}</div>'
+        '<div class="sh-title"><div class="sh-name" role="heading" aria-level="1">'
+        f"{escaped(scenario.title)}</div>"
         f"<span>{scenario.status} · elevations in {escaped(scenario.datum)} · check code {code}</span></div>"
         f'<div class="sh-note">{escaped(age)}</div>'
     )
@@ -136,7 +137,7 @@ def _figure(barrier: Barrier, kind: str) -> float:
 
 
 def _line_row(barrier: Barrier, system: System, force: str, moment: str) -> list[str]:
-    panel = barrier.panel
+    panel = barrier.record
     name = escaped(barrier_title(panel.id, panel.name))
     rated = elevation(panel.rated_level.value, system) if panel.rated_level else "none entered"
     mark = verdict_mark(barrier.verdict())
@@ -164,7 +165,7 @@ def head_on(barrier: Assessed) -> float:
 
 
 def line_cards(assessment: Assessment, system: System) -> str:
-    """Flood line for a phone: one card for each barrier, most pressing verdicts first come with the picture."""
+    """Flood line for a phone: one card for each barrier, in the order of the scenario."""
     return (
         '<div class="sh-cards">'
         + "".join(_card(barrier, system) for barrier in assessment.barriers)
@@ -173,7 +174,7 @@ def line_cards(assessment: Assessment, system: System) -> str:
 
 
 def _card(barrier: Barrier, system: System) -> str:
-    panel = barrier.panel
+    panel = barrier.record
     name = f"<b>{escaped(barrier_title(panel.id, panel.name))}</b>"
     mark = verdict_mark(barrier.verdict())
     if not isinstance(barrier, Assessed):
@@ -199,11 +200,11 @@ def remark_list(barriers: Sequence[Barrier]) -> str:
     for barrier in barriers:
         if isinstance(barrier, Assessed):
             items += "".join(
-                f"<li><b>{escaped(barrier.panel.id)}</b> {escaped(r)}</li>" for r in barrier.remarks
+                f"<li><b>{escaped(barrier.record.id)}</b> {escaped(r)}</li>" for r in barrier.remarks
             )
         else:
             words = escaped(disagreement_text(barrier.first, barrier.second))
-            items += f"<li><b>{escaped(barrier.panel.id)}</b> {words}</li>"
+            items += f"<li><b>{escaped(barrier.record.id)}</b> {words}</li>"
     return f"<ul>{items}</ul>" if items else ""
 
 

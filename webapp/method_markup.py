@@ -1,4 +1,4 @@
-"""HTML of the page of methods: formulas with their limits of use, sources with edition and status, cautions."""
+"""HTML of the page of methods: formulas with limits of use, sources with edition and status, cautions."""
 
 from __future__ import annotations
 

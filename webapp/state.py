@@ -1,8 +1,9 @@
 """What a session holds and how it changes: plain functions over a mapping, no Streamlit.
 
-A session holds one document (everything as typed). The address holds the same document, packed. A change goes
-into the document and from there to the address; an address that the session did not write itself (a link, Back,
-reload) goes into the document. What was typed and refused stays in its field, with the reason beside it.
+A session holds one document (everything as typed). The address holds the same document, packed. A change
+goes into the document and from there to the address; an address that the session did not write itself (a
+link, Back, reload) goes into the document. What was typed and refused stays in its field, with the reason
+beside it.
 """
 
 from __future__ import annotations
@@ -32,7 +33,8 @@ STEPS: dict[System, tuple[str, str, int]] = {"US": ("0.5", "ft", 2), "SI": ("0.1
 def begin(session: Session, address: str | None) -> None:
     """Give the session a document before any field is drawn.
 
-    The address's, when it holds one that the session did not write; else what it has; on a first visit an example.
+    The address's, when it holds one that the session did not write; else what it has; on a first visit an
+    example.
 
     Parameters
     ----------
@@ -59,7 +61,7 @@ def _open_link(session: Session, address: str) -> None:
 
 
 def settle(session: Session) -> None:
-    """Put levels and unit system into their fields: when the document is new, or a page without them dropped them."""
+    """Fill the fields of levels and units: for a new document, or when a page without them dropped them."""
     document = session["document"]
     if session.pop("new document", False) or "system" not in session:
         session["system"] = scenario_of(document).units

@@ -25,32 +25,35 @@ _HEADINGS = (
     "rated",
     "first limit",
 )
-_RIGHT = {3, 5, 6, 7, 8, 9, 10}
+_RIGHT = frozenset({3, 5, 6, 7, 8, 9, 10})
+_LEGEND = (
+    "force: horizontal, positive toward the protected side; moment: about the bottom edge; first limit: "
+    "computed, a screening figure"
+)
 
 
 def table_text(assessment: Assessment, document: Mapping[str, object]) -> str:
     """Return what `sillhead check` prints: levels, a row for each barrier, remarks and the caution."""
     scenario, system = assessment.scenario, assessment.scenario.units
     flood, protected = (float(assessment.levels.of(side)[0]) for side in ("flood", "protected"))
+    behind = elevation(protected, system, scenario.datum if math.isfinite(protected) else "")
+    time = f"as of {scenario.water.as_of.isoformat()}" if scenario.water.as_of else "no time stated"
     code = check_code(input_digest(document))
     lines = [
         f"{scenario.title}   [{scenario.status}]   {code}",
-        f"flood side {elevation(flood, system, scenario.datum)}   protected side "
-        f"{elevation(protected, system, scenario.datum if math.isfinite(protected) else '')}"
-        + (f"   as of {scenario.water.as_of.isoformat()}" if scenario.water.as_of else "   no time stated"),
+        f"flood side {elevation(flood, system, scenario.datum)}   protected side {behind}   {time}",
         "",
         *_aligned([_HEADINGS, *(_row(barrier, system) for barrier in assessment.barriers)]),
         "",
         *_remarks(assessment.barriers),
-        "force: horizontal, positive toward the protected side; moment: about the bottom edge; first limit: "
-        "computed, a screening figure",
+        _LEGEND,
         f"Sillhead {__version__}. {HEADLINE}",
     ]
     return _plain("\n".join(lines))
 
 
 def _row(barrier: Barrier, system: System) -> tuple[str, ...]:
-    panel = barrier.panel
+    panel = barrier.record
     rated = elevation(panel.rated_level.value, system) if panel.rated_level else "none entered"
     if not isinstance(barrier, Assessed):
         return (panel.id, panel.name, "withheld", "", "", "", "", "", "", rated, "")
@@ -89,9 +92,9 @@ def _remarks(barriers: Sequence[Barrier]) -> list[str]:
     lines = []
     for barrier in barriers:
         if isinstance(barrier, Assessed):
-            lines += [f"{barrier.panel.id}: {remark}" for remark in barrier.remarks]
+            lines += [f"{barrier.record.id}: {remark}" for remark in barrier.remarks]
         else:
-            lines.append(f"{barrier.panel.id}: {disagreement_text(barrier.first, barrier.second)}")
+            lines.append(f"{barrier.record.id}: {disagreement_text(barrier.first, barrier.second)}")
     return [*lines, ""] if lines else []
 
 

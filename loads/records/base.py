@@ -89,7 +89,7 @@ class Measure:
             With the rule that is broken.
         """
         if not isinstance(raw, Mapping):
-            return self._checked(raw, raw, {})
+            return self._checked(raw, {})
         unknown = [str(key) for key in raw if key not in _PEDIGREE_KEYS]
         if unknown:
             raise problem_error(
@@ -97,9 +97,9 @@ class Measure:
             )
         if "value" not in raw:
             raise problem_error(f'has no "value"; write for example {{ value = "{self._example()}" }}')
-        return self._checked(raw["value"], raw, raw)
+        return self._checked(raw["value"], raw)
 
-    def _checked(self, text: object, raw: object, pedigree: Mapping[str, object]) -> Quantity:
+    def _checked(self, text: object, pedigree: Mapping[str, object]) -> Quantity:
         value, unit = self._number(text)
         ends = {}
         for end in ("low", "high"):

@@ -284,10 +284,10 @@ def _order_problems(i: int, upper: Sediment, lower: Sediment) -> list[tuple[str,
         return [(f"{where}.pressure", f'"{lower.pressure}"', rule)]
     if lower.pressure == "fluid mud" and upper.pressure != "fluid mud":
         return [(f"{where}.pressure", '"fluid mud"', "fluid mud must lie above every soil layer of its side")]
-    if "fluid" in lower.pressure and lower.fluid_unit_weight and upper.fluid_unit_weight:
-        if lower.fluid_unit_weight.value < upper.fluid_unit_weight.value and lower.pressure == "fluid mud":
-            rule = "must not be lighter than the fluid mud above it"
-            return [(f"{where}.fluid_unit_weight", f'"{lower.fluid_unit_weight.text}"', rule)]
+    above, below = upper.fluid_unit_weight, lower.fluid_unit_weight
+    if lower.pressure == "fluid mud" and above and below and below.value < above.value:
+        rule = "must not be lighter than the fluid mud above it"
+        return [(f"{where}.fluid_unit_weight", f'"{below.text}"', rule)]
     return []
 
 

@@ -93,7 +93,7 @@ class Sediment(Record):
             Quantity,
             Measure(
                 kind="angle",
-                meaning="Friction angle between soil and face δ; more than zero selects Coulomb's coefficient",
+                meaning="Friction angle between soil and face δ; above zero it selects Coulomb's coefficient",
                 least="0 deg",
                 most="35 deg",
                 example="15 deg",
@@ -162,16 +162,17 @@ class Sediment(Record):
         return problems
 
     def _soil_problems(self) -> list[tuple[str, str, str]]:
-        problems = []
         needed = {
             "at rest": ("saturated_unit_weight", "friction_angle"),
             "active": ("saturated_unit_weight", "friction_angle"),
             "passive": ("saturated_unit_weight", "friction_angle"),
             "entered": ("saturated_unit_weight", "pressure_coefficient"),
         }[self.pressure]
-        for name in needed:
-            if getattr(self, name) is None:
-                problems.append((name, "", f'is missing; pressure "{self.pressure}" needs it'))
+        problems = [
+            (name, "", f'is missing; pressure "{self.pressure}" needs it')
+            for name in needed
+            if getattr(self, name) is None
+        ]
         if self.fluid_unit_weight is not None:
             rule = (
                 f'must be left out with pressure "{self.pressure}": the layer is soil with its water counted '

@@ -1,7 +1,8 @@
-"""Ratios of the engine's speed, each pair measured in turn on the same machine. Run: python -m tests.bench.engine.
+"""Ratios of the engine's speed, each pair measured in turn on the same machine: python -m tests.bench.engine.
 
-1. Force and moment of 1000 strips in 1000 states by steps and ramps, against Gauss–Legendre quadrature over sorted
-   breakpoints in numpy (budget: at least 60 times), and against a loop over scipy's `quad` (at least 3000 times).
+1. Force and moment of 1000 strips in 1000 states by steps and ramps, against Gauss–Legendre quadrature over
+   sorted breakpoints in numpy (budget: at least 60 times), and against a loop over scipy's `quad` (at least
+   3000 times).
 2. `assess` of a line of 100 barriers with all checks in one state (budget: at most 150 ms).
 3. First-limit levels of 100 barriers to 1 mm, against one `assess` without them (at most 10 times).
 """
@@ -20,7 +21,8 @@ import numpy as np
 from scipy.integrate import quad
 
 from loads.arrays import FloatArray
-from loads.assessment import assess, first_limit_of
+from loads.assessment import assess
+from loads.panel_checks import first_limit_of
 from loads.scenario_file import read_file, scenario_of
 from loads.water import water_diagram
 from webapp.scenario_files import example_files

@@ -35,11 +35,11 @@ def push(document: Document, level: float, kind: str) -> float:
     barrier = at_level(document, level)
     if kind == "pressure":
         face = barrier.face
-        z = np.unique(
-            [*np.linspace(face.bottom, face.top, 50)[1:-1], face.bottom + 1e-9, *barrier.diagram.knot[0]]
-        )
-        inside = z[(z > face.bottom) & (z < face.top)]
-        over, under = (barrier.diagram.pressure(inside, at_underside=side) for side in (False, True))
+        low, high = face.bottom, face.top
+        z = np.array([*np.linspace(low, high, 50), *barrier.diagram.knot[0]])
+        # a face ends with the pressure just inside its edge
+        inner, above = z[(z > low) & (z <= high)], z[(z >= low) & (z < high)]
+        under, over = barrier.diagram.pressure(inner, at_underside=True), barrier.diagram.pressure(above)
         return float(max(over.max(), under.max()))
     found = barrier.resultant.total if kind == "force" else barrier.resultant.moment
     return float(found[0])

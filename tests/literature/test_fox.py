@@ -2,10 +2,11 @@
 
 from __future__ import annotations
 
+import numpy as np
 import pytest
 
 from tests.agreement import Agree, printed
-from tests.scenes import arm, panel_under
+from tests.scenes import arm, chain_force, panel_under
 
 
 @pytest.mark.source(
@@ -18,3 +19,16 @@ def test_inclined_gate(agree: Agree) -> None:
     agree(found.total / 1e3, printed("588"), what="force, kN")
     agree(8 - arm(found), printed("6.22"), what="centre of pressure along the plane from the surface, m")
     assert found.vertical[0] < 0
+
+
+@pytest.mark.source(
+    "Fox",
+    "from memory, to be confirmed; Ex. 3.7, p. 76: gate x = y²/4 of 5 m, 4 m of "
+    "water, 999 kg/m³, held 5 m from its "
+    "hinge; the transcription prints 104.54 kN because it takes the integral's error "
+    "estimate for the integral",
+)
+def test_parabolic_gate(agree: Agree) -> None:
+    points = [(height**2 / 4, height) for height in np.linspace(0.0, 4.0, 41).tolist()]
+    _, _, moment = chain_force(points, "5 m", flood_side="4 m", unit_weight="9800.19 N/m3")
+    agree(moment / 5 / 1e3, printed("167"), what="force that holds the gate, of 40 plane panels, kN")

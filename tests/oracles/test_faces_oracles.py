@@ -11,10 +11,10 @@ import numpy as np
 import pytest
 from scipy.integrate import dblquad, quad
 
-from loads.assessment import Assessed, assess
+from loads.assessment import Assessed
 from loads.diagram import Diagram
 from tests.agreement import Agree, printed
-from tests.scenes import arm, filed, panel_under, scene
+from tests.scenes import arm, chain_force, panel_under
 
 WATER = "9.80665 kN/m3"
 GRAVITY = 9.80665
@@ -249,18 +249,10 @@ def test_h15_arc_about_its_axis(agree: Agree, level: float, across: str, up: str
 )
 def test_h16_plane_panels_along_an_arc(agree: Agree, chords: int, up: str) -> None:
     angles = np.linspace(math.pi, 1.5 * math.pi, chords + 1)[::-1]
-    x, z = 1.5 * np.cos(angles), 1.5 + 1.5 * np.sin(angles)
-    panels = []
-    for i in range(chords):
-        rise, run = float(z[i + 1] - z[i]), float(x[i + 1] - x[i])
-        size = {"width": "1 m", "height": f"{math.hypot(rise, run)!r} m"}
-        tilt = math.degrees(math.atan2(rise, run))
-        panels.append({"bottom": f"{float(z[i])!r} m", "tilt": f"{tilt!r} deg", **size})
-    found = assess(filed(scene(*panels, flood_side="1.5 m", unit_weight=WATER))).barriers
-    parts = [barrier.resultant for barrier in found if isinstance(barrier, Assessed)]
-    assert len(parts) == chords
-    agree(sum(part.horizontal for part in parts), printed("11032.48125"), what="horizontal part, N")
-    agree(sum(part.vertical for part in parts), printed(up), what="vertical part, N, up")
+    points = [(1.5 * math.cos(angle), 1.5 + 1.5 * math.sin(angle)) for angle in angles]
+    across, vertical, _ = chain_force(points, "1 m", flood_side="1.5 m", unit_weight=WATER)
+    agree(across, printed("11032.48125"), what="horizontal part, N")
+    agree(vertical, printed(up), what="vertical part, N, up")
 
 
 def test_h17_three_fluids_on_an_arc(agree: Agree) -> None:

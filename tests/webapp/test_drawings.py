@@ -205,7 +205,7 @@ def test_facts_of_a_line_name_every_barrier_and_its_verdict() -> None:
     told = line_facts(ODD["forty"], system="US")
     assert told[0] == "Flood side 104.60\u00a0ft NAVD88."
     for barrier, sentence in zip(ODD["forty"].barriers, told[2:], strict=True):
-        assert sentence.startswith(f"{barrier.panel.id} · {barrier.panel.name}: {barrier.verdict()}")
+        assert sentence.startswith(f"{barrier.record.id} · {barrier.record.name}: {barrier.verdict()}")
 
 
 def test_each_state_is_drawn_with_its_own_levels_and_first_limit_only_where_it_holds() -> None:

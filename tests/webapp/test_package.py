@@ -29,7 +29,7 @@ from webapp.display import elevation, in_unit
 from webapp.package import package_html, package_job, package_pdf
 from webapp.package.drawings import metre_on_axis, section_drawing
 from webapp.package.entered import NO_SOURCE, entry_groups
-from webapp.package.figures import figure, line_text, with_unit
+from webapp.step_text import figure, line_text, with_unit
 from webapp.package.tables import RESULT_DIGITS
 from webapp.print_worker import PrintWorker
 
@@ -113,7 +113,7 @@ def test_figures_are_those_of_the_engine_and_of_the_json(package: Package) -> No
     told = answer(assessment, package.document)
     for barrier, data in zip(assessment.barriers, told["barriers"], strict=True):
         assert isinstance(barrier, Assessed)
-        assert package.says(f"Panel {barrier.panel.id} · {barrier.panel.name}")
+        assert package.says(f"Panel {barrier.record.id} · {barrier.record.name}")
         load = data["load"]
         for name, value, kind in (
             ("Horizontal force H, toward the protected side", load["horizontal"], "force"),

@@ -82,7 +82,7 @@ class Column:
     @cached_property
     def name_rows(self) -> list[str]:
         """Name of the barrier in at most two lines."""
-        return wrapped(self.reading.panel.name, self.room - 8, self.size, lines=2)
+        return wrapped(self.reading.record.name, self.room - 8, self.size, lines=2)
 
 
 def mark_room(readings: list[Reading], size: float) -> float:
@@ -94,7 +94,7 @@ def mark_room(readings: list[Reading], size: float) -> float:
 
 
 def _marked(reading: Reading) -> tuple[float | None, float | None]:
-    rated, first = reading.panel.rated_level, reading.first_limit
+    rated, first = reading.record.rated_level, reading.first_limit
     shown = first.level if first is not None and not first.without_water else None
     return (rated.value if rated else None), shown
 
@@ -177,7 +177,7 @@ def draw_captions(sheet: Sheet, columns: list[Column], top: float) -> float:
     step = size + 4
     for column in columns:
         y = top + size
-        identifier = wrapped(column.reading.panel.id, column.room - 8, size + 2, lines=1, bold=True)
+        identifier = wrapped(column.reading.record.id, column.room - 8, size + 2, lines=1, bold=True)
         sheet.text(column.middle, y, identifier[0], size=size + 2, anchor="middle", bold=True)
         for row, name in enumerate(column.name_rows):
             sheet.text(column.middle, y + step * (row + 1), name, size=size, anchor="middle")

@@ -43,7 +43,7 @@ def labels_of(reading: Reading, side: str, room: float, size: float) -> list[Lab
     level = reading.level(side)
     words = elevation(level, system)
     labels = [Label(z=level if math.isfinite(level) else face.bottom, words=words, water=True)]
-    for number, layer in enumerate(reading.panel.layers(side), 1):
+    for number, layer in enumerate(reading.record.layers(side), 1):
         height = bare_elevation(layer.top.value, system)
         left = room - text_width(f" {height}", size - 1)
         name = shortened(layer.name or f"sediment {number}", left, size - 1)
@@ -109,7 +109,7 @@ def _draw_side(view: View, side: str, edge: float, origin: float) -> None:
     water = _body(view, (face.bottom, level), edge, origin)
     for fill in (tint, sheet.fill(side)) if water else ():
         sheet.shape([water], fill=fill)
-    layers = view.reading.panel.layers(side)
+    layers = view.reading.record.layers(side)
     feet = [layer.top.value for layer in layers[1:]] + [face.bottom]
     for number, (layer, foot) in enumerate(zip(layers, feet, strict=False)):
         body = _body(view, (foot, layer.top.value), edge, origin)

@@ -86,7 +86,7 @@ def _rows(readings: list[Reading], form: Format) -> list[list[Column]]:
     """Barriers in rows of about the same number."""
     if not readings:
         return []
-    rings = [front_rings(reading.panel, reading.face) for reading in readings]
+    rings = [front_rings(reading.record, reading.face) for reading in readings]
     widest = max(map(width_of, rings))
     each = math.ceil(len(readings) / math.ceil(len(readings) / form.row))
     room = (form.width - form.left - form.right) / each

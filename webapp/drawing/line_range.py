@@ -36,7 +36,7 @@ def shown_range(readings: list[Reading], levels: list[float]) -> tuple[float, fl
     reach = max(_REACH * (high - low), 0.3)
     wanted = [level for level in levels if math.isfinite(level)]
     for reading in readings:
-        rated, first = reading.panel.rated_level, reading.first_limit
+        rated, first = reading.record.rated_level, reading.first_limit
         wanted += [rated.value] if rated else []
         wanted += [first.level] if first is not None and first.level is not None else []
     shown = [z for z in wanted if low - reach <= z <= high + reach]

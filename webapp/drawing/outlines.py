@@ -9,9 +9,9 @@ import numpy as np
 from shapely import Polygon
 from shapely.geometry.polygon import orient
 
-from loads.assessment import Face
 from loads.diagram import Diagram
 from loads.faces import ArcFace
+from loads.panel_checks import Face
 from loads.records.panel import Panel, ring_values
 from webapp.drawing.svg import Point
 

@@ -6,10 +6,11 @@ import math
 from dataclasses import dataclass
 from functools import cached_property
 
-from loads.assessment import Assessed, Assessment, Barrier, Face
+from loads.assessment import Assessed, Assessment, Barrier
 from loads.checks import SEVERITY, Check, Verdict
 from loads.faces import face_of
 from loads.first_limit import FirstLimit
+from loads.panel_checks import Face
 from loads.records.panel import Panel
 from loads.states import Levels
 from webapp.display import System, barrier_title, elevation, pedigree, show, significant
@@ -40,9 +41,9 @@ class Reading:
     datum: str
 
     @property
-    def panel(self) -> Panel:
-        """The record."""
-        return self.barrier.panel
+    def record(self) -> Panel:
+        """What stands on the line."""
+        return self.barrier.record
 
     @property
     def assessed(self) -> Assessed | None:
@@ -52,7 +53,7 @@ class Reading:
     @cached_property
     def face(self) -> Face:
         """Geometry, also of a withheld barrier."""
-        return self.barrier.face if isinstance(self.barrier, Assessed) else face_of(self.panel)
+        return self.barrier.face if isinstance(self.barrier, Assessed) else face_of(self.record)
 
     @property
     def verdict(self) -> Verdict:
@@ -62,7 +63,7 @@ class Reading:
     @property
     def title(self) -> str:
         """Id and name."""
-        return barrier_title(self.panel.id, self.panel.name)
+        return barrier_title(self.record.id, self.record.name)
 
     def level(self, side: str) -> float:
         """Level of one side, −inf when dry. [m]."""
@@ -222,7 +223,7 @@ def _limit_facts(reading: Reading) -> list[str]:
         )
     elif reading.assessed is not None:
         said.append("No limit entered")
-    rated = reading.panel.rated_level
+    rated = reading.record.rated_level
     if rated is not None:
         said.append(f"Rated level {reading.elevation(rated.value)} ({pedigree(rated)})")
     first = reading.first_limit

@@ -96,7 +96,7 @@ def scale_of(reading: Reading, form: Format, upper: float, across: float) -> Sca
     least, most = reach_across(face)
     body = max(face.top - face.bottom, 0.35 * (most - least))
     levels = [reading.level(side) for side in SIDES]
-    levels += [layer.top.value for side in SIDES for layer in reading.panel.layers(side)]
+    levels += [layer.top.value for side in SIDES for layer in reading.record.layers(side)]
     reach = _LEVEL_REACH * body
     near = [z for z in levels if face.bottom - reach <= z <= face.top + reach]
     low, high = min([face.bottom, *near]), max([face.top, *near])

@@ -13,10 +13,10 @@ from loads.worked_step import Step, Term
 from loads.working import working
 from webapp.display import System, barrier_title, elevation
 from webapp.package.drawings import Drawing, section_drawing
-from webapp.package.figures import figure, line_text, tiny, unit_of, with_unit
 from webapp.package.grid import Grid, Heading, grid_of, words
 from webapp.package.states import State
 from webapp.package.tables import RESULT_DIGITS, checks_grid, level_rows, states_grid
+from webapp.step_text import figure, line_text, tiny, unit_of, with_unit
 
 _NIL = 1e-9
 
@@ -82,10 +82,10 @@ def withheld_view(barrier: Withheld, system: System, datum: str) -> WithheldView
         for (name, kind), both in zip(names, zip(barrier.first, barrier.second, strict=True), strict=True)
     )
     return WithheldView(
-        id=barrier.panel.id,
-        title=barrier_title(barrier.panel.id, barrier.panel.name),
+        id=barrier.record.id,
+        title=barrier_title(barrier.record.id, barrier.record.name),
         verdict=barrier.verdict(),
-        note=barrier.panel.note,
+        note=barrier.record.note,
         drawing=section_drawing(barrier, system, datum),
         second=Grid(headings=_second_headings(), rows=rows),
     )
@@ -106,7 +106,7 @@ def barrier_view(barrier: Assessed, many: Assessment, states: list[State], datum
         Of every elevation.
     """
     system = many.scenario.units
-    panel = barrier.panel
+    panel = barrier.record
     return BarrierView(
         id=panel.id,
         title=barrier_title(panel.id, panel.name),

@@ -6,7 +6,7 @@ from dataclasses import dataclass
 
 from loads.worked_step import Table
 from webapp.display import System
-from webapp.package.figures import table_cells, unit_of
+from webapp.step_text import table_cells, unit_of
 
 
 @dataclass(frozen=True, kw_only=True)

@@ -27,10 +27,10 @@ from webapp.package.barrier import (
 )
 from webapp.package.drawings import flood_line_drawing
 from webapp.package.entered import entry_groups, taken
-from webapp.package.figures import figure, unit_of, with_unit
 from webapp.package.grid import Grid, Heading, words
 from webapp.package.states import levels_of_states, package_states
 from webapp.package.tables import RESULT_DIGITS, bare, ratio_text
+from webapp.step_text import figure, unit_of, with_unit
 
 SHEETS: dict[System, str] = {"US": "letter", "SI": "A4"}
 """Size of the sheet by unit system, as CSS spells it."""
@@ -83,53 +83,65 @@ def package_html(assessment: Assessment, document: Document, *, digest: str, ver
     str
         The same for the same input.
     """
-    scenario = assessment.scenario
+    parts = {
+        **_cover(assessment.scenario, digest, version),
+        **_computed(assessment),
+        **_stated(assessment.scenario),
+        "fluids": _fluids(assessment),
+        "file_text": write_document(document).decode(),
+    }
+    return _environment().get_template("package.html").render(parts)
+
+
+def _cover(scenario: Scenario, digest: str, version: str) -> dict[str, Any]:
     system = scenario.units
+    kinds = ("length", "pressure", "unit weight", "force", "moment")
+    return {
+        "sheet": SHEETS[system],
+        "sheet_name": SHEET_NAMES[system],
+        "scenario": scenario,
+        "not_stated": NOT_STATED,
+        "digest": digest,
+        "code": check_code(digest),
+        "version": version,
+        "levels": _levels(scenario),
+        "headline": HEADLINE,
+        "units": [(kind, unit_of(kind, system)) for kind in kinds],
+        "comment_rows": _COMMENT_ROWS,
+    }
+
+
+def _computed(assessment: Assessment) -> dict[str, Any]:
+    """Drawing of the line, tables of results, and every barrier."""
+    scenario = assessment.scenario
     states = package_states(scenario)
     many = assess(scenario, levels_of_states(states))
     views: list[BarrierView | WithheldView] = [
         barrier_view(barrier, many, states, scenario.datum)
         if isinstance(barrier, Assessed)
-        else withheld_view(barrier, system, scenario.datum)
+        else withheld_view(barrier, scenario.units, scenario.datum)
         for barrier in assessment.barriers
     ]
-    return (
-        _environment()
-        .get_template("package.html")
-        .render(
-            sheet=SHEETS[system],
-            sheet_name=SHEET_NAMES[system],
-            scenario=scenario,
-            system=system,
-            not_stated=NOT_STATED,
-            digest=digest,
-            code=check_code(digest),
-            version=version,
-            levels=_levels(scenario),
-            headline=HEADLINE,
-            line=flood_line_drawing(assessment, system),
-            summary=_summary(assessment),
-            governing=_governing(many, [state.name for state in states]),
-            groups=entry_groups(scenario),
-            taken=taken(scenario),
-            fluids=_fluids(assessment),
-            assumptions=ASSUMPTIONS,
-            not_counted=NOT_COUNTED,
-            states=_states_grid(assessment),
-            barriers=views,
-            methods=METHODS,
-            references=_references(),
-            cautions=CAUTIONS,
-            comment_rows=_COMMENT_ROWS,
-            file_text=write_document(document).decode(),
-            **_units(system),
-        )
-    )
+    return {
+        "line": flood_line_drawing(assessment, scenario.units),
+        "summary": _summary(assessment),
+        "governing": _governing(many, [state.name for state in states]),
+        "states": _states_grid(assessment),
+        "barriers": views,
+    }
 
 
-def _units(system: System) -> dict[str, Any]:
-    kinds = ("length", "pressure", "unit weight", "force", "moment")
-    return {"units": [(kind, unit_of(kind, system)) for kind in kinds]}
+def _stated(scenario: Scenario) -> dict[str, Any]:
+    """What was entered, what it rests on, and where the methods come from."""
+    return {
+        "groups": entry_groups(scenario),
+        "taken": taken(scenario),
+        "assumptions": ASSUMPTIONS,
+        "not_counted": NOT_COUNTED,
+        "methods": METHODS,
+        "references": _references(),
+        "cautions": CAUTIONS,
+    }
 
 
 def _levels(scenario: Scenario) -> list[tuple[str, str, str]]:
@@ -168,7 +180,7 @@ def _summary(assessment: Assessment) -> Grid:
 
 
 def _summary_row(barrier: Barrier, system: System) -> tuple[str, ...]:
-    panel = barrier.panel
+    panel = barrier.record
     name = barrier_title(panel.id, panel.name)
     rated = _bare(panel.rated_level.value, system) if panel.rated_level else "–"
     if not isinstance(barrier, Assessed):
@@ -200,7 +212,7 @@ def _bare(level: float, system: System) -> str:
 def _governing(many: Assessment, names: list[str]) -> list[str]:
     """Which check has the largest ratio, at the entered levels and over all states."""
     found = [
-        (float(ratio), i, barrier.panel.id, check.name)
+        (float(ratio), i, barrier.record.id, check.name)
         for barrier in many.barriers
         if isinstance(barrier, Assessed)
         for check in barrier.checks

@@ -8,9 +8,9 @@ from loads.arrays import FloatArray
 from loads.assessment import Assessed, Assessment, Withheld
 from loads.checks import Check
 from webapp.display import NO_BREAK, System, elevation, pedigree, significant
-from webapp.package.figures import figure, percent, unit_of, with_unit
 from webapp.package.grid import Grid, Heading, words
 from webapp.package.states import State
+from webapp.step_text import figure, percent, unit_of, with_unit
 
 RESULT_DIGITS = 4
 """Significant figures of results."""
@@ -62,7 +62,7 @@ def ratio_text(ratio: float) -> str:
 
 def level_rows(barrier: Assessed, system: System, datum: str) -> tuple[tuple[str, str, str], ...]:
     """Rated level and first-limit level side by side, each with the words that say which is which."""
-    rated = barrier.panel.rated_level
+    rated = barrier.record.rated_level
     rated_row = (
         "Rated level",
         elevation(rated.value, system, datum) if rated else "none entered",

@@ -1,9 +1,12 @@
+from functools import partial
+
 import streamlit as st
-from webapp.drawing.section import barrier_drawing
 
 from loads.assessment import Assessed, assess
-from webapp import barrier_markup, figures, markup, parts, state
+from loads.working import working
+from webapp import barrier_markup, figures, markup, parts, state, working_markup
 from webapp.display import barrier_title
+from webapp.drawing.section import barrier_drawing
 from webapp.whatif import neighbours
 
 system, palette = parts.system(), parts.palette()
@@ -21,11 +24,8 @@ barrier = assessment.barrier(st.session_state["barrier"])
 if not isinstance(barrier, Assessed):
     st.markdown(markup.block(barrier_markup.withheld_notice(barrier)), unsafe_allow_html=True)
 else:
-    shown = {"system": system, "palette": palette, "datum": scenario.datum}
-    picture = markup.drawings(
-        barrier_drawing(barrier, **shown),
-        barrier_drawing(barrier, **shown, narrow=True),
-    )
+    drawing = partial(barrier_drawing, barrier, system=system, palette=palette, datum=scenario.datum)
+    picture = markup.drawings(drawing(), drawing(narrow=True))
     st.markdown(
         markup.block(barrier_markup.headline(barrier, system) + picture + markup.remark_list([barrier])),
         unsafe_allow_html=True,
@@ -48,4 +48,6 @@ else:
         st.plotly_chart(figure, alt=figures.pressure_text(barrier, system), config={"displaylogo": False})
     with st.expander("Worked steps", on_change="rerun", key="worked steps") as steps:
         if steps.open:
-            st.markdown(markup.block(barrier_markup.worked_steps(barrier, system)), unsafe_allow_html=True)
+            st.markdown(
+                markup.block(working_markup.worked_steps(working(barrier), system)), unsafe_allow_html=True
+            )

@@ -1,8 +1,8 @@
 import streamlit as st
-from webapp.drawing.line import line_drawing
 
 from loads.assessment import assess
 from webapp import markup, parts, state
+from webapp.drawing.line import line_drawing
 
 assessment = assess(state.scenario(st.session_state))
 system, palette = parts.system(), parts.palette()
@@ -22,9 +22,9 @@ st.markdown(
     markup.block(
         f'<div class="sh-wide">{markup.line_table(assessment, system)}</div>'
         + markup.remark_list(assessment.barriers)
-        + '<div class="sh-note">Force: horizontal, positive toward the protected side. Moment: about the bottom edge. '
-        "First limit: the computed flood-side level at which the first entered load limit is reached, a screening "
-        "figure. Rated: the highest water an engineer has put their name to.</div>"
+        + '<div class="sh-note">Force: horizontal, positive toward the protected side. Moment: about the '
+        "bottom edge. First limit: the computed flood-side level at which the first entered load limit is "
+        "reached, a screening figure. Rated: the highest water an engineer has put their name to.</div>"
     ),
     unsafe_allow_html=True,
 )

@@ -8,8 +8,8 @@ st.markdown(
         method_markup.cautions()
         + method_markup.methods()
         + method_markup.sources()
-        + f'<div class="sh-note">Sillhead {__version__}. Which published figures the program was held against, and how '
-        "closely it meets them, stands in tests/VERIFICATION.md of the source.</div>"
+        + f'<div class="sh-note">Sillhead {__version__}. Which published figures the program was held '
+        "against, and how closely it meets them, stands in tests/VERIFICATION.md of the source.</div>"
     ),
     unsafe_allow_html=True,
 )

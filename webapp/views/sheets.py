@@ -22,8 +22,9 @@ try:
     link = parts.frozen_link()
     st.code(link, language=None, wrap_lines=True)
     st.markdown(
-        f"The whole scenario stands in the link ({len(link)} characters); nothing is kept on the server. Whoever "
-        f"holds the link holds the plan: levels, limits and all. Check code **{code}**; another code, another plan."
+        f"The whole scenario stands in the link ({len(link)} characters); nothing is kept on the server. "
+        "Whoever holds the link holds the plan: levels, limits and all. "
+        f"Check code **{code}**; another code, another plan."
     )
 except LinkError as error:
     st.warning(f"{error}. A link may hold {MAX_LINK_CHARACTERS} characters.")

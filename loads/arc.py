@@ -31,7 +31,7 @@ class ArcShape:
         Radius. [m]
     bulge
         +1 when the centre lies on the flood side, −1 when on the protected side: the arc stands at
-        x = centre_x + bulge·√(radius² − (z − centre_z)²).
+        x = centre_x + bulge·√(radius² − (z − centre_z)²). [–]
     """
 
     height: float

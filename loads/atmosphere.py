@@ -1,7 +1,7 @@
 """The lower atmosphere with a constant lapse rate, and the density of dry air.
 
 Station pressure is what a barometer shows where it hangs. Sea-level pressure is the same carried down to sea
-level, as weather services publish it; it must never be used as the pressure at the station.
+level, as weather services publish it; it is never the pressure at the station.
 """
 
 from __future__ import annotations
@@ -21,7 +21,7 @@ STANDARD_SEA_LEVEL_TEMPERATURE: Final = 288.15
 """Temperature of the standard atmosphere at sea level [StandardAtmosphere1976]. [K]"""
 
 WARM_SEA_LEVEL_TEMPERATURE: Final = 300.0
-"""Temperature at sea level by the habit of warm sites [AtmospherePractice]; 0.8 % more pressure at 1.6 km. [K]"""
+"""Temperature at sea level by the habit of warm sites [AtmospherePractice]. [K]"""
 
 LAPSE_RATE: Final = 0.0065
 """Fall of temperature with height below 11 km [StandardAtmosphere1976]. [K/m]"""
@@ -30,7 +30,7 @@ DRY_AIR_GAS_CONSTANT: Final = 287.05287
 """Gas constant of dry air [StandardAtmosphere1976]. [J/(kg K)]"""
 
 ROUNDED_GAS_CONSTANT: Final = 287.0
-"""Gas constant of dry air as the trade rounds it [AtmospherePractice]; the exponent is then 5.257. [J/(kg K)]"""
+"""Gas constant of dry air as the trade rounds it [AtmospherePractice]. [J/(kg K)]"""
 
 EARTH_RADIUS: Final = 6356766.0
 """Radius that ties geopotential height to altitude [StandardAtmosphere1976]. [m]"""
@@ -47,7 +47,7 @@ SEA_LEVEL_PRESSURE: Final = LimitOfUse(
     low=90000.0,
     high=106000.0,
     unit="Pa",
-    note="from memory, to be confirmed: records are near 870 and 1085 hPa, and hardly any day leaves this range",
+    note="from memory, to be confirmed: records are near 870 and 1085 hPa",
 )
 
 
@@ -67,7 +67,7 @@ def geopotential_height(altitude: FloatArray) -> FloatArray:
     Raises
     ------
     OutsideFormulaError
-        An altitude that is not a number, or below the centre of the earth.
+        An altitude that no place has.
 
     Notes
     -----
@@ -122,16 +122,12 @@ def temperature_at(
     Returns
     -------
     FloatArray
-        Temperature T, shape (n,). [K]
+        Temperature T = T₀ − λ H, shape (n,). [K]
 
     Raises
     ------
     OutsideFormulaError
         A height outside `HEIGHT`, a lapse rate that is not positive, or air at absolute zero.
-
-    Notes
-    -----
-    T = T₀ − λ H; `HEIGHT`.
 
     Examples
     --------
@@ -153,7 +149,7 @@ def pressure_ratio(
     lapse_rate: float = LAPSE_RATE,
     gas_constant: float = DRY_AIR_GAS_CONSTANT,
 ) -> FloatArray:
-    """Pressure of still dry air at one height over that at another [StandardAtmosphere1976].
+    """Pressure of still air at one height over that at another [StandardAtmosphere1976].
 
     Parameters
     ----------
@@ -162,8 +158,7 @@ def pressure_ratio(
     to_height
         Geopotential height H₂ where it is wanted, shape (n,). [m]
     sea_level_temperature
-        Temperature at sea level T₀, shape (n,) or one number: 288.15 K of the standard atmosphere unless
-        given; warm sites use 300 K, `WARM_SEA_LEVEL_TEMPERATURE`. [K]
+        Temperature at sea level T₀, shape (n,) or one number; the standard 288.15 K unless given. [K]
     lapse_rate
         Fall of temperature with height λ. [K/m]
     gas_constant
@@ -224,8 +219,8 @@ def station_pressure(
 
     Notes
     -----
-    p = p₀ (T/T₀)ⁿ, as `pressure_ratio`. A service may have reduced with a temperature of its own; an altimeter
-    setting is reduced with the standard atmosphere.
+    p = p₀ (T/T₀)ⁿ, as `pressure_ratio`. A service may have reduced with a temperature of its own; an
+    altimeter setting is reduced with the standard atmosphere.
 
     Examples
     --------

@@ -50,7 +50,10 @@ NOT_COUNTED = (
 
 ASSUMPTIONS = (
     "Levels are still-water levels at the barrier, in the scenario's datum.",
-    "Water presses at right angles to the face, with a unit weight that is the same at every depth on its side.",
+    (
+        "Water presses at right angles to the face, with a unit weight that is the same at every depth on its "
+        "side."
+    ),
     "Pore water in sediment stands at the water level of its side.",
     "Above water soil has its moist unit weight, below water its saturated one less that of the water.",
     "Pressure of soil is not taken below zero: where cohesion would pull, nothing acts.",

@@ -15,7 +15,8 @@ Verdict = Literal["below limit", "near limit", "above limit", "not checked", "wi
 SEVERITY: tuple[Verdict, ...] = ("not checked", "below limit", "near limit", "above limit", "withheld")
 """Verdicts from the least to the most pressing."""
 
-_ROUNDING = 1e-9
+ROUNDING = 1e-9
+"""How far a ratio may stray from rounding alone. [–]"""
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -65,9 +66,9 @@ class Check:
         if self.limit is None:
             return "not checked"
         ratio = float(self.ratio[index])
-        if not ratio <= 1 + _ROUNDING:  # so worded that what is no number is never below
+        if not ratio <= 1 + ROUNDING:  # so worded that what is no number is never below
             return "above limit"
-        return "near limit" if ratio >= self.near - _ROUNDING else "below limit"
+        return "near limit" if ratio >= self.near - ROUNDING else "below limit"
 
 
 def source_text(limit: Quantity | None) -> str:

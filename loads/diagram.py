@@ -4,6 +4,7 @@
     V(z) = Σ s ⟨k − z⟩¹ + g ⟨k − z⟩²/2        force per metre of width above z
     M(z) = Σ s ⟨k − z⟩²/2 + g ⟨k − z⟩³/6      moment about z of everything above z
     N(z) = Σ s ⟨k − z⟩³/6 + g ⟨k − z⟩⁴/24     its integral, for faces whose width varies
+    Q(z) = Σ s ⟨k − z⟩⁴/24 + g ⟨k − z⟩⁵/120   the next, for deflections
 
 ⟨x⟩ʲ is the Macaulay bracket of beam theory: xʲ for x > 0, else nothing.
 """
@@ -140,6 +141,10 @@ class Diagram:
     def moment_integral(self, z: FloatArray) -> FloatArray:
         """N, integral of M above z, shape (n, m). [N·m]."""
         return self._integral(z, 3)
+
+    def moment_second_integral(self, z: FloatArray) -> FloatArray:
+        """Q, integral of N above z, for deflections, shape (n, m). [N·m²]."""
+        return self._integral(z, 4)
 
     def _integral(self, z: FloatArray, order: int) -> FloatArray:
         points = np.atleast_2d(z)

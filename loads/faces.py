@@ -4,7 +4,6 @@ from __future__ import annotations
 
 import math
 from dataclasses import dataclass
-from typing import Protocol
 
 import numpy as np
 from shapely import Polygon
@@ -41,24 +40,6 @@ class Resultant:
     total: FloatArray
     moment: FloatArray
     line_of_action: FloatArray
-
-
-class Face(Protocol):
-    """What every face can tell."""
-
-    @property
-    def bottom(self) -> float:
-        """Elevation of the bottom edge. [m]."""
-
-    @property
-    def top(self) -> float:
-        """Elevation of the top edge. [m]."""
-
-    def resultant(self, diagram: Diagram) -> Resultant:
-        """Force and moment of a pressure diagram on this face."""
-
-    def x_at(self, z: float) -> float:
-        """Position of the face at an elevation, from its bottom edge toward the protected side. [m]."""
 
 
 def line_of_action(bottom: float, force: FloatArray, moment: FloatArray, scale: FloatArray) -> FloatArray:
@@ -119,7 +100,7 @@ class StripFace:
 
     def x_at(self, z: float) -> float:
         """Position at an elevation, from the bottom edge toward the protected side. [m]."""
-        return (z - self.bottom) / math.tan(self.tilt) if abs(self.tilt - math.pi / 2) > 1e-12 else 0.0
+        return _plane_x(z - self.bottom, self.tilt)
 
     def resultant(self, diagram: Diagram) -> Resultant:
         """Force and moment of a pressure diagram on this face.
@@ -140,6 +121,10 @@ class StripFace:
         upright = (about_low + force * low).sum(axis=1)
         scale = diagram.gross(self.bottom) * self.area
         return plane_resultant(self.bottom, self.tilt, normal, upright / sine**2, scale)
+
+
+def _plane_x(height: float, tilt: float) -> float:
+    return height / math.tan(tilt) if abs(tilt - math.pi / 2) > 1e-12 else 0.0
 
 
 def plane_resultant(
@@ -193,7 +178,7 @@ class CircleFace:
 
     def x_at(self, z: float) -> float:
         """Position at an elevation, from the bottom edge toward the protected side. [m]."""
-        return (z - self.bottom) / math.tan(self.tilt) if abs(self.tilt - math.pi / 2) > 1e-12 else 0.0
+        return _plane_x(z - self.bottom, self.tilt)
 
     def resultant(self, diagram: Diagram) -> Resultant:
         """Force and moment of a pressure diagram on this face, in closed form.

@@ -91,7 +91,9 @@ def pressure_change(legs: Sequence[Leg]) -> PressureChange:
     shares = np.broadcast_arrays(*(-leg.unit_weight * leg.rise for leg in legs))
     rises = np.broadcast_arrays(*(leg.rise for leg in legs))
     by_leg = np.stack(shares, axis=-1)
-    return PressureChange(by_leg=by_leg, total=by_leg.sum(axis=-1), rise=np.stack(rises, axis=-1).sum(axis=-1))
+    return PressureChange(
+        by_leg=by_leg, total=by_leg.sum(axis=-1), rise=np.stack(rises, axis=-1).sum(axis=-1)
+    )
 
 
 def rise_along(length: FloatArray, inclination: FloatArray) -> FloatArray:

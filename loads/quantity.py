@@ -66,7 +66,7 @@ class Quantity:
 
 def _clean(text: str) -> str:
     plain = text.strip().replace("−", "-").replace("′", "'").replace("″", '"')
-    return re.sub("(?<=[a-z])[²³]", lambda power: str("²³".index(power[0]) + 2), plain)
+    return re.sub("(?<=[a-z])[²³⁴]", lambda power: str("²³⁴".index(power[0]) + 2), plain)
 
 
 def _canonical_unit(symbol: str) -> str:
@@ -156,7 +156,7 @@ def read_quantity(text: str, kind: str, example: str = "") -> tuple[float, str]:
 
 
 def _wrong_unit(unit: str, kind: str, number: str, example: str) -> str:
-    if re.search(r"\d", unit.rstrip("23")):
+    if re.search(r"\d", unit.rstrip("234")):
         also = "; feet and inches as 6 ft 6 in, the inches below 12" if kind == "length" else ""
         return f'it must be one number and one unit, for example "{example}"{also}'
     accepted = ", ".join(units_of(kind))

@@ -1,8 +1,7 @@
 """The second computation: every load again from its own definition, by Gauss–Legendre quadrature.
 
-Nothing here knows steps, ramps or closed forms. Pressure at a point is found by adding up what lies above it;
-faces are sampled point by point; pieces end where a level, a layer boundary, a zero of pressure or a corner
-of the outline is. Results of `loads.assessment` are shown only while both agree.
+Nothing here knows steps, ramps or closed forms. Pressure at a point is what lies above it, added up; faces
+are sampled in pieces that end at levels, layer boundaries, zeros of pressure and corners of the outline.
 """
 
 from __future__ import annotations
@@ -147,14 +146,13 @@ def _breaks(setting: Setting, bottom: float, top: float, corners: FloatArray) ->
 def _zero_columns(ground: _Ground, rough: FloatArray) -> list[FloatArray]:
     """Elevations at which a layer's pressure passes through zero, within each piece."""
     columns = []
-    middle = (rough[:, :-1] + rough[:, 1:]) / 2
-    span = rough[:, 1:] - rough[:, :-1]
+    middle, span = (rough[:, :-1] + rough[:, 1:]) / 2, np.diff(rough, axis=1)
     for index, _ in enumerate(ground.layers):
         if not _may_be_tension(ground, index):
             continue
         lower = _unfloored(ground, index, middle - span / 4)
         upper = _unfloored(ground, index, middle + span / 4)
-        slope = np.where(span > 0, (lower - upper) / np.where(span > 0, span / 2, 1.0), 0.0)
+        slope = (lower - upper) / np.where(span > 0, span / 2, np.inf)
         shift = np.where(slope != 0, (lower + upper) / 2 / np.where(slope != 0, slope, 1.0), 0.0)
         columns.append(np.clip(middle + shift, rough[:, :-1], rough[:, 1:]))
     return columns
@@ -166,8 +164,8 @@ def _may_be_tension(ground: _Ground, index: int) -> bool:
     if layer.is_fluid:
         return False
     soils = [over for over in ground.layers[: index + 1] if not over.is_fluid]
-    light = any(unit_weights(over, ground.water_unit_weight)[1] < 0 for over in soils)
-    return light or (layer.cohesion is not None and layer.cohesion.value > 0)
+    lightest = min(unit_weights(over, ground.water_unit_weight)[1] for over in soils)
+    return lightest < 0 or bool(layer.cohesion and layer.cohesion.value > 0)
 
 
 def _points(breaks: FloatArray, nodes: FloatArray, weights: FloatArray) -> tuple[FloatArray, FloatArray]:
@@ -175,8 +173,7 @@ def _points(breaks: FloatArray, nodes: FloatArray, weights: FloatArray) -> tuple
     low, high = breaks[:, :-1, None], breaks[:, 1:, None]
     z = (low + high) / 2 + (high - low) / 2 * nodes
     w = (high - low) / 2 * weights
-    states = breaks.shape[0]
-    return z.reshape(states, -1), w.reshape(states, -1)
+    return z.reshape(len(breaks), -1), w.reshape(len(breaks), -1)
 
 
 def _straight(setting: Setting, panel: Panel) -> tuple[FloatArray, FloatArray, FloatArray]:
@@ -242,10 +239,8 @@ def _circle(setting: Setting, panel: Panel) -> tuple[FloatArray, FloatArray, Flo
 def _arc(setting: Setting, panel: Panel) -> tuple[FloatArray, FloatArray, FloatArray]:
     """Force parts and moment on an arc, every element of it pressed along its own normal."""
     assert panel.width is not None
-    assert panel.height is not None
-    arc = panel.arc_shape()
-    bottom = panel.bottom.value
-    top = bottom + panel.height.value
+    arc, bottom = panel.arc_shape(), panel.bottom.value
+    top = bottom + arc.height
     breaks = _breaks(setting, bottom, top, np.zeros(0))
     foot = math.atan2(-arc.centre_z, -arc.bulge * arc.centre_x)
     head = math.atan2(arc.height - arc.centre_z, arc.bulge * (arc.offset - arc.centre_x))

@@ -6,41 +6,11 @@ A docstring cites a work as ``[Key]``; a test of literature cites it as
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import Literal, TypeAlias
+from loads.reference import Reference, Status, textbook
+from loads.references_closure import HANDLING, LEAKAGE, OVERFLOW
+from loads.references_wall import WALLS
 
-Status: TypeAlias = Literal["published", "common practice, no source", "from memory, to be confirmed"]
-
-_TRANSCRIBED = "worked examples as transcribed in an open companion notebook of the textbook"
-_UNSTATED = "not known"
-
-
-@dataclass(frozen=True, kw_only=True)
-class Reference:
-    """One work.
-
-    Attributes
-    ----------
-    key
-        How docstrings and tests cite it.
-    citation
-        Author, title, where it was published, and how its figures were seen when not in the work itself.
-    edition
-        Edition or year; what is not known is said.
-    status
-        What the work is worth as a source: published, common practice without a source, or recalled and
-        still to be confirmed.
-    """
-
-    key: str
-    citation: str
-    edition: str
-    status: Status = "published"
-
-
-def _textbook(key: str, title: str, edition: str = _UNSTATED) -> Reference:
-    return Reference(key=key, citation=f"{title}; {_TRANSCRIBED}", edition=edition)
-
+__all__ = ["REFERENCES", "Reference", "Status"]
 
 _METHODS = (
     Reference(
@@ -178,6 +148,42 @@ _WATER = (
     ),
 )
 
+_ATMOSPHERE = (
+    Reference(
+        key="StandardAtmosphere1976",
+        citation="U.S. Standard Atmosphere, NOAA, NASA and USAF, constants and lapse rate below 11 km; "
+        "table rows by geometric altitude as quoted in the test data of an open library",
+        edition="1976",
+    ),
+    Reference(
+        key="ICAOStandardAtmosphere",
+        citation="ICAO Doc 7488, Manual of the ICAO Standard Atmosphere, table rows by geometric altitude as "
+        "quoted in the test data of an open library",
+        edition="3rd edition, 1993, by the library",
+    ),
+    Reference(
+        key="AtmospherePractice",
+        citation="Lapse rate taken constant at 6.5 K/km up to about 10 km, 287 J/(kg K) for air, exponent "
+        "5.26, 288.15 K at sea level by the standard and 300 K by the habit of warm sites",
+        edition="none",
+        status="common practice, no source",
+    ),
+    Reference(
+        key="SignRule",
+        citation="Going down in one liquid adds ρgh, going up takes it off: the rule of manometer chains",
+        edition="none",
+        status="common practice, no source",
+    ),
+    Reference(
+        key="InstrumentPractice",
+        citation="Level from an instrument: elevation of its zero or sensor plus the head, which is the "
+        "pressure above the air's over the unit weight of the water; a sealed logger needs the air "
+        "pressure taken off, a long bubbler line the weight of its gas added",
+        edition="none",
+        status="common practice, no source",
+    ),
+)
+
 _MECHANICS = (
     Reference(
         key="Macaulay1919",
@@ -187,21 +193,22 @@ _MECHANICS = (
 )
 
 _TEXTBOOKS = (
-    _textbook("Cengel", "Y. A. Çengel and J. M. Cimbala, Fluid Mechanics: Fundamentals and Applications"),
-    _textbook("DasFoundation", "B. M. Das, Principles of Foundation Engineering"),
-    _textbook(
+    textbook("Cengel", "Y. A. Çengel and J. M. Cimbala, Fluid Mechanics: Fundamentals and Applications"),
+    textbook("DasFoundation", "B. M. Das, Principles of Foundation Engineering"),
+    textbook(
         "DasGeotechnical", "B. M. Das, Principles of Geotechnical Engineering", "7th, by the transcription"
     ),
-    _textbook("Dighe", "R. S. Dighe, Hydraulics Made Easy"),
-    _textbook("Douglas", "J. F. Douglas, Fluid Mechanics"),
-    _textbook("Fox", "R. W. Fox and A. T. McDonald, Introduction to Fluid Mechanics"),
-    _textbook("Massey", "B. S. Massey and J. Ward-Smith, Mechanics of Fluids"),
-    _textbook("Munson", "B. R. Munson, D. F. Young and T. H. Okiishi, Fundamentals of Fluid Mechanics"),
-    _textbook("Natarajan", "M. K. Natarajan, Principles of Fluid Mechanics"),
-    _textbook("Paradise", "R. S. Paradise, Problems in Hydraulics"),
-    _textbook("Sarkar", "B. K. Sarkar, Fluid Mechanics and Hydraulic Machines"),
-    _textbook("Schaschke", "C. Schaschke, Fluid Mechanics: Worked Examples"),
-    _textbook(
+    textbook("Daugherty", "R. L. Daugherty and J. B. Franzini, Fluid Mechanics"),
+    textbook("Dighe", "R. S. Dighe, Hydraulics Made Easy"),
+    textbook("Douglas", "J. F. Douglas, Fluid Mechanics"),
+    textbook("Fox", "R. W. Fox and A. T. McDonald, Introduction to Fluid Mechanics"),
+    textbook("Massey", "B. S. Massey and J. Ward-Smith, Mechanics of Fluids"),
+    textbook("Munson", "B. R. Munson, D. F. Young and T. H. Okiishi, Fundamentals of Fluid Mechanics"),
+    textbook("Natarajan", "M. K. Natarajan, Principles of Fluid Mechanics"),
+    textbook("Paradise", "R. S. Paradise, Problems in Hydraulics"),
+    textbook("Sarkar", "B. K. Sarkar, Fluid Mechanics and Hydraulic Machines"),
+    textbook("Schaschke", "C. Schaschke, Fluid Mechanics: Worked Examples"),
+    textbook(
         "Subramanya", "K. Subramanya, 1000 Solved Problems in Fluid Mechanics", "2005, by the transcription"
     ),
 )
@@ -226,6 +233,17 @@ _PRACTICE = (
 
 REFERENCES: dict[str, Reference] = {
     reference.key: reference
-    for group in (_METHODS, _WATER, _MECHANICS, _TEXTBOOKS, _PRACTICE)
+    for group in (
+        _METHODS,
+        _WATER,
+        _ATMOSPHERE,
+        _MECHANICS,
+        _TEXTBOOKS,
+        _PRACTICE,
+        OVERFLOW,
+        LEAKAGE,
+        HANDLING,
+        WALLS,
+    )
     for reference in group
 }

@@ -72,6 +72,62 @@ _EXPRESSIONS: dict[str, dict[str, str]] = {
     "temperature": {"degF": "degF", "°F": "degF", "degC": "degC", "°C": "degC", "K": "kelvin"},
     "density": {"kg/m3": "kilogram/meter**3", "g/L": "gram/liter", "mg/L": "milligram/liter"},
     "speed": {"ft/s": "foot/second", "m/s": "meter/second"},
+    "stress": {
+        "psi": "psi",
+        "ksi": "ksi",
+        "psf": "lbf/foot**2",
+        "MPa": "megapascal",
+        "N/mm2": "newton/millimeter**2",
+        "GPa": "gigapascal",
+        "kPa": "kilopascal",
+    },
+    "area": {
+        "in2": "inch**2",
+        "ft2": "foot**2",
+        "mm2": "millimeter**2",
+        "cm2": "centimeter**2",
+        "m2": "meter**2",
+    },
+    "section modulus": {
+        "in3": "inch**3",
+        "mm3": "millimeter**3",
+        "cm3": "centimeter**3",
+        "m3": "meter**3",
+    },
+    "second moment of area": {
+        "in4": "inch**4",
+        "mm4": "millimeter**4",
+        "cm4": "centimeter**4",
+        "m4": "meter**4",
+    },
+    "weight": {
+        "lb": "lbf",
+        "lbf": "lbf",
+        "kip": "kip",
+        "kg": "kilogram*standard_gravity",
+        "N": "newton",
+        "kN": "kilonewton",
+    },
+    "duration": {"min": "minute", "h": "hour", "s": "second"},
+    "flow": {
+        "gpm": "gallon/minute",
+        "gal/min": "gallon/minute",
+        "cfs": "foot**3/second",
+        "ft3/s": "foot**3/second",
+        "L/s": "liter/second",
+        "L/min": "liter/minute",
+        "L/h": "liter/hour",
+        "m3/s": "meter**3/second",
+        "m3/h": "meter**3/hour",
+    },
+    "flow per length": {
+        "gpm/ft": "gallon/minute/foot",
+        "gal/min/ft": "gallon/minute/foot",
+        "gph/ft": "gallon/hour/foot",
+        "L/s/m": "liter/second/meter",
+        "L/min/m": "liter/minute/meter",
+        "L/h/m": "liter/hour/meter",
+    },
 }
 
 SI_UNITS = {
@@ -86,6 +142,14 @@ SI_UNITS = {
     "temperature": "K",
     "density": "kg/m³",
     "speed": "m/s",
+    "stress": "Pa",
+    "area": "m²",
+    "section modulus": "m³",
+    "second moment of area": "m⁴",
+    "weight": "N",
+    "duration": "s",
+    "flow": "m³/s",
+    "flow per length": "m²/s",
     "number": "",
 }
 """Unit in which each kind is computed and printed as JSON."""
@@ -102,6 +166,14 @@ EXAMPLES = {
     "temperature": "50 degF",
     "density": "100 kg/m3",
     "speed": "5 ft/s",
+    "stress": "19.5 ksi",
+    "area": "4.5 in2",
+    "section modulus": "12 in3",
+    "second moment of area": "30 in4",
+    "weight": "60 lb",
+    "duration": "5 min",
+    "flow": "20 gpm",
+    "flow per length": "0.5 L/h/m",
 }
 """What a value of each kind may look like, for messages and forms."""
 
@@ -174,8 +246,8 @@ def kinds_of(symbol: str) -> tuple[str, ...]:
 
     Examples
     --------
-    >>> kinds_of("psf")
-    ('pressure',)
+    >>> kinds_of("pcf")
+    ('unit weight',)
     """
     return tuple(kind for kind, symbols in _EXPRESSIONS.items() if symbol in symbols)
 

@@ -207,7 +207,7 @@ def spoiled(draw: st.DrawFn) -> Document:
             parent = parent[step]
         action = draw(st.sampled_from(["replace", "replace", "drop", "rename", "double"]))
         if action == "replace":
-            parent[last] = draw(st.sampled_from(ODD))
+            parent[last] = copy.deepcopy(draw(st.sampled_from(ODD)))
         elif action == "drop":
             del parent[last]
         elif action == "rename" and isinstance(parent, dict):

@@ -14,6 +14,9 @@ from loads.units import EXAMPLES, SI_UNITS, from_si, kinds_of, to_si, units_of
 
 POUND = Fraction("0.45359237") * Fraction("9.80665")
 FOOT = Fraction("0.3048")
+GALLON = 231 * (FOOT / 12) ** 3
+WATER = 1000 * Fraction("9.80665")
+MERCURY = Fraction("13.5951") * WATER
 EXACT: dict[tuple[str, str], Fraction] = {
     ("length", "ft"): FOOT,
     ("length", "in"): FOOT / 12,
@@ -27,6 +30,16 @@ EXACT: dict[tuple[str, str], Fraction] = {
     ("pressure", "kPa"): Fraction(1000),
     ("pressure", "MPa"): Fraction(10**6),
     ("pressure", "kN/m2"): Fraction(1000),
+    ("pressure", "hPa"): Fraction(100),
+    ("pressure", "mbar"): Fraction(100),
+    ("pressure", "mb"): Fraction(100),
+    ("pressure", "bar"): Fraction(10**5),
+    ("pressure", "inHg"): MERCURY * FOOT / 12,
+    ("pressure", "mmHg"): MERCURY / 1000,
+    ("pressure", "inH2O"): WATER * FOOT / 12,
+    ("pressure", "ftH2O"): WATER * FOOT,
+    ("pressure", "cmH2O"): WATER / 100,
+    ("pressure", "mH2O"): WATER,
     ("unit weight", "pcf"): POUND / FOOT**3,
     ("unit weight", "lb/ft3"): POUND / FOOT**3,
     ("unit weight", "kN/m3"): Fraction(1000),
@@ -48,6 +61,23 @@ EXACT: dict[tuple[str, str], Fraction] = {
     ("density", "g/L"): Fraction(1),
     ("density", "mg/L"): Fraction(1, 1000),
     ("speed", "ft/s"): FOOT,
+    ("flow", "gpm"): GALLON / 60,
+    ("flow", "gal/min"): GALLON / 60,
+    ("flow", "cfs"): FOOT**3,
+    ("flow", "ft3/s"): FOOT**3,
+    ("flow", "L/s"): Fraction(1, 1000),
+    ("flow", "L/min"): Fraction(1, 60_000),
+    ("flow", "L/h"): Fraction(1, 3_600_000),
+    ("flow", "m3/s"): Fraction(1),
+    ("flow", "m3/h"): Fraction(1, 3600),
+    ("flow per length", "gpm/ft"): GALLON / 60 / FOOT,
+    ("flow per length", "gal/min/ft"): GALLON / 60 / FOOT,
+    ("flow per length", "gph/ft"): GALLON / 3600 / FOOT,
+    ("flow per length", "L/s/m"): Fraction(1, 1000),
+    ("flow per length", "L/min/m"): Fraction(1, 60_000),
+    ("flow per length", "L/h/m"): Fraction(1, 3_600_000),
+    ("duration", "min"): Fraction(60),
+    ("duration", "h"): Fraction(3600),
 }
 
 

@@ -58,6 +58,13 @@ CHOICES: dict[System, dict[str, Choice]] = {
         "temperature": _choice("temperature", "degF", "°F"),
         "density": _choice("density", "kg/m3", "kg/m³"),
         "speed": _choice("speed", "ft/s"),
+        "deflection": _choice("length", "in"),
+        "stress": _choice("stress", "psi", larger="ksi", size=10_000.0),
+        "section modulus": _choice("section modulus", "in3", "in³"),
+        "weight": _choice("weight", "lb", larger="kip", size=10_000.0),
+        "duration": _choice("duration", "min", larger="h", size=120.0),
+        "flow": _choice("flow", "gpm", "gal/min", larger="cfs", size=4_500.0),
+        "flow per length": _choice("flow per length", "gpm/ft", "gal/min/ft"),
     },
     "SI": {
         "length": _choice("length", "m"),
@@ -72,6 +79,13 @@ CHOICES: dict[System, dict[str, Choice]] = {
         "temperature": _choice("temperature", "degC", "°C"),
         "density": _choice("density", "kg/m3", "kg/m³"),
         "speed": _choice("speed", "m/s"),
+        "deflection": _choice("length", "mm"),
+        "stress": _choice("stress", "MPa"),
+        "section modulus": _choice("section modulus", "cm3", "cm³"),
+        "weight": _choice("weight", "kg"),
+        "duration": _choice("duration", "min", larger="h", size=120.0),
+        "flow": _choice("flow", "L/s"),
+        "flow per length": _choice("flow per length", "L/h/m"),
     },
 }
 

@@ -70,6 +70,9 @@ def settle(session: Session) -> None:
         if fresh or key not in session:
             session[key] = typed_level(document, side)
             session["level problems"].pop(side, None)
+        else:
+            # written anew on every run: a field that stood on another page otherwise opens empty on this one
+            session[key] = session[key]
 
 
 def open_document(session: Session, document: Document) -> None:

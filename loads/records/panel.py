@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import math
 from itertools import pairwise
-from typing import Annotated, Literal
+from typing import Annotated, ClassVar, Literal
 
 from pydantic import Field, field_validator, model_validator
 
@@ -97,6 +97,8 @@ class Limits(Record):
 class Panel(Record):
     """One face that water and sediment press on."""
 
+    kind: ClassVar[str] = "panel"
+
     id: Annotated[str, Field(min_length=1, max_length=24, pattern=r"^[^\x00-\x1f\x7f]*$")]
     name: Name = ""
     bottom: Elevation
@@ -174,7 +176,7 @@ class Panel(Record):
         problems = self._missing_and_unused()
         if not problems:
             problems = self._shape_problems()
-        problems += self._sediment_problems()
+        problems += self.sediment_problems()
         if problems:
             raise several_problems(problems)
         return self
@@ -238,21 +240,24 @@ class Panel(Record):
             bulge=1.0 if self.centre == "flood" else -1.0,
         )
 
-    def _sediment_problems(self) -> list[tuple[str, str, str]]:
+    def sediment_problems(self, foot: str = "bottom of the panel") -> list[tuple[str, str, str]]:
+        """Say what is wrong with the layers, (field, value, rule); `foot` names what they lie on."""
         problems: list[tuple[str, str, str]] = []
         for side in ("flood", "protected"):
             indexed = [(i, layer) for i, layer in enumerate(self.sediment) if layer.side == side]
             for i, layer in indexed:
-                problems += self._layer_problems(i, layer, first=i == indexed[0][0])
+                problems += self._layer_problems(i, layer, foot, first=i == indexed[0][0])
             for (_, upper), (i, lower) in pairwise(indexed):
                 problems += _order_problems(i, upper, lower)
         return problems
 
-    def _layer_problems(self, i: int, layer: Sediment, *, first: bool) -> list[tuple[str, str, str]]:
+    def _layer_problems(
+        self, i: int, layer: Sediment, foot: str, *, first: bool
+    ) -> list[tuple[str, str, str]]:
         problems = []
         where = f"sediment[{i}]"
         if layer.top.value <= self.bottom.value:
-            rule = f'it must lie above the bottom of the panel, "{self.bottom.text}"'
+            rule = f'it must lie above the {foot}, "{self.bottom.text}"'
             problems.append((f"{where}.top", f'"{layer.top.text}"', rule))
         if layer.surcharge is not None and not first:
             rule = "belongs to the uppermost layer of its side only"

@@ -10,6 +10,8 @@ from pydantic import Field, field_validator, model_validator
 
 from loads.quantity import Quantity
 from loads.records.base import Measure, Name, Note, Record, problem_error, several_problems
+from loads.records.basis import Basis
+from loads.records.closure import Closure
 from loads.records.panel import Elevation, Panel
 
 FORMAT = 1
@@ -122,13 +124,20 @@ class Scenario(Record):
     datum: Annotated[Name, Field(min_length=1)]
     units: Literal["US", "SI"] = "US"
     near_limit: Annotated[float, Field(ge=0.5, lt=1, allow_inf_nan=False)] = 0.9
+    basis: Basis = Basis()
     water: Water
-    panel: Annotated[tuple[Panel, ...], Field(max_length=500)]
+    panel: Annotated[tuple[Panel, ...], Field(max_length=500)] = ()
+    closure: Annotated[tuple[Closure, ...], Field(max_length=500)] = ()
 
-    @field_validator("panel", mode="before")
+    @field_validator("panel", "closure", mode="before")
     @classmethod
     def _list_becomes_tuple(cls, value: object) -> object:
         return tuple(value) if isinstance(value, list) else value
+
+    @property
+    def barriers(self) -> tuple[Panel | Closure, ...]:
+        """Everything that stands on the line, kind by kind, in the order of the file."""
+        return (*self.panel, *self.closure)
 
 
 def scenario_schema() -> dict[str, Any]:

@@ -6,46 +6,36 @@ import math
 from dataclasses import dataclass, replace
 
 from loads.assessment import Barrier
-from webapp.display import System, show, unit_label
+from webapp.display import System
 from webapp.drawing.cut import draw_section, margin_of
+from webapp.drawing.frame import HEAD, LINE, TEXT_ROOM, Format, agreement, axis, heading, load_block, notes_on
 from webapp.drawing.front import draw_front
-from webapp.drawing.measure import shortened, text_width, wrapped
+from webapp.drawing.measure import wrapped
 from webapp.drawing.outlines import reach_across
 from webapp.drawing.palette import Palette
 from webapp.drawing.pressure import draw_pressure, load_texts
-from webapp.drawing.reading import Reading, facts, over_top_texts, ratio_text, reverse_text
-from webapp.drawing.scale import Scale, ticks
+from webapp.drawing.reading import Reading, facts
+from webapp.drawing.scale import Scale
 from webapp.drawing.sheet import Sheet
-from webapp.drawing.view import SIDES, View, beyond_notes
-
-
-@dataclass(frozen=True, kw_only=True)
-class Format:
-    """Sizes of the wide or the narrow drawing. [px]."""
-
-    width: float
-    axis: float
-    plot: float
-    least_plot: float
-    section: tuple[float, float]
-    margin: float
-    pad: tuple[float, float]
-    size: float
-
+from webapp.drawing.view import SIDES, View
 
 WIDE = Format(
     width=1080, axis=56, plot=330, least_plot=170, section=(252, 700), margin=150, pad=(44, 100), size=13
 )
 NARROW = Format(
-    width=360, axis=40, plot=230, least_plot=130, section=(44, 360), margin=124, pad=(18, 60), size=12
+    width=360,
+    axis=40,
+    plot=230,
+    least_plot=130,
+    section=(44, 360),
+    margin=124,
+    pad=(18, 60),
+    size=12,
+    narrow=True,
 )
 _FRONT = (70.0, 236.0)
-_TEXT_ROOM = 186.0
-_HEAD = 100.0
 _LEVEL_REACH = 0.55
 _LEAST_ACROSS = 40.0
-_LINE = 17
-_COMPARED_DIGITS = 5
 
 
 def barrier_drawing(
@@ -132,127 +122,52 @@ def _section(sheet: Sheet, reading: Reading, form: Format, upper: float) -> Sect
 
 def _wide(sheet: Sheet, reading: Reading) -> str:
     form = WIDE
-    section = _section(sheet, reading, form, _HEAD)
+    section = _section(sheet, reading, form, HEAD)
     view, scale = section.view, section.view.scale
-    _heading(view, form)
-    _axis(view, form, form.width - 12)
+    heading(view, form)
+    axis(view, form, form.width - 12)
     captions = draw_front(replace(view, left=_FRONT[0], right=_FRONT[1]))
     draw_section(view, section.margins, section.pad)
     pressure = replace(view, left=form.section[1] + 26, right=form.width - 12)
-    draw_pressure(pressure, _TEXT_ROOM, 30)
-    _load_block(pressure)
+    draw_pressure(pressure, TEXT_ROOM, 30)
+    load_block(pressure)
     y = scale.lower + 24
     for row, words in enumerate(captions):
-        sheet.text(_FRONT[0] + 10, y + _LINE * row, words, size=form.size - 1, fill=sheet.palette.faint)
+        sheet.text(_FRONT[0] + 10, y + LINE * row, words, size=form.size - 1, fill=sheet.palette.faint)
     notes = [
         row
-        for note in _notes(view)
+        for note in notes_on(view)
         for row in wrapped(note, form.section[1] - form.section[0], form.size, lines=2, bold=True)
     ]
     for row, words in enumerate(notes):
-        sheet.text(form.section[0], y + _LINE * row, words, size=form.size, bold=True)
-    for row, words in enumerate(_agreement(reading)):
-        sheet.text(pressure.left, y + _LINE * row, words, size=form.size - 1, fill=sheet.palette.faint)
+        sheet.text(form.section[0], y + LINE * row, words, size=form.size, bold=True)
+    for row, words in enumerate(agreement(reading)):
+        sheet.text(pressure.left, y + LINE * row, words, size=form.size - 1, fill=sheet.palette.faint)
     rows = max(len(captions), len(notes), 2)
-    return sheet.svg(form.width, math.ceil(y + _LINE * rows))
+    return sheet.svg(form.width, math.ceil(y + LINE * rows))
 
 
 def _narrow(sheet: Sheet, reading: Reading) -> str:
     form = NARROW
-    section = _section(sheet, reading, form, _HEAD + 34)
+    section = _section(sheet, reading, form, HEAD + 34)
     view, scale = section.view, section.view.scale
-    _heading(view, form)
-    _axis(view, form, form.width - 6)
+    heading(view, form)
+    axis(view, form, form.width - 6)
     draw_section(view, section.margins, section.pad)
     upper = scale.lower + 48
     below = replace(scale, lower=upper + scale.lower - scale.upper, upper=upper)
     pressure = replace(view, scale=below, left=form.axis + 4, right=form.width - 8)
-    _axis(pressure, form, form.width - 6)
+    axis(pressure, form, form.width - 6)
     draw_pressure(pressure, 0, 12)
     y = below.lower + 28
     for row, words in enumerate(load_texts(pressure)):
         sheet.text(form.axis, y, words, size=form.size + (7 if row == 0 else 1), bold=row == 0)
         y += 19
-    for words in _notes(view):
+    for words in notes_on(view):
         for text in wrapped(words, form.width - form.axis - 8, form.size, lines=3, bold=True):
             sheet.text(form.axis, y, text, size=form.size, bold=True)
-            y += _LINE
-    for words in _agreement(reading):
+            y += LINE
+    for words in agreement(reading):
         sheet.text(form.axis, y, words, size=form.size - 1, fill=sheet.palette.faint)
-        y += _LINE
+        y += LINE
     return sheet.svg(form.width, math.ceil(y))
-
-
-def _heading(view: View, form: Format) -> None:
-    """Title and verdict at the head of the sheet."""
-    sheet, reading, size = view.sheet, view.reading, form.size
-    check = reading.check
-    about = f"{ratio_text(check, reading.index)}, {check.name}" if check is not None else ""
-    if reading.assessed is not None and check is None:
-        about = "no limit entered"
-    if form is NARROW:
-        title = shortened(reading.title, form.width - 16, size + 3, bold=True)
-        sheet.text(8, 22, title, size=size + 3, bold=True)
-        width = sheet.verdict_box(8, 34, reading.verdict, size=size + 1, anchor="start")
-        room = form.width - width - 26
-        rows = wrapped(about, room, size, lines=2)
-        for row, words in enumerate(rows):
-            sheet.text(width + 18, (52 if len(rows) == 1 else 44) + 15 * row, words, size=size)
-        return
-    width = sheet.verdict_box(form.width - 12, 8, reading.verdict, size=size + 2, anchor="end")
-    end = form.width - 24 - width
-    if about:
-        sheet.text(end, 28, about, size=size + 1, anchor="end")
-    room = end - text_width(about, size + 1) - 40
-    sheet.text(12, 28, shortened(reading.title, room, size + 5, bold=True), size=size + 5, bold=True)
-
-
-def _axis(view: View, form: Format, right: float) -> None:
-    sheet, scale, reading = view.sheet, view.scale, view.reading
-    most = max(2, int((scale.lower - scale.upper) / 34))
-    for z, label in ticks(scale, reading.system, min(most, 9)):
-        y = scale.y(z)
-        sheet.line([(form.axis, y), (right, y)], stroke=sheet.palette.grid, width=0.8)
-        sheet.text(form.axis - 6, y + 4, label, size=form.size - 1, anchor="end", fill=sheet.palette.faint)
-    if scale.upper < 1.5 * _HEAD:
-        unit = f"elevation, {unit_label('elevation', reading.system)} {reading.datum}".strip()
-        words = shortened(unit, form.width - 20, form.size - 1)
-        y = scale.upper - (48 if form is NARROW else 9)
-        sheet.text(8, y, words, size=form.size - 1, fill=sheet.palette.faint)
-
-
-def _load_block(view: View) -> None:
-    """Force, its place and the moment beside the arrow."""
-    reading, scale, texts = view.reading, view.scale, load_texts(view)
-    y = scale.upper + 20
-    if reading.assessed is not None:
-        acts = float(reading.assessed.resultant.line_of_action[reading.index])
-        if math.isfinite(acts):
-            y = scale.clamped(acts) - 6
-    y = max(min(y, scale.lower - 17 * (len(texts) - 1) - 4), scale.upper + 16)
-    for row, words in enumerate(texts):
-        view.sheet.text(
-            view.right - _TEXT_ROOM + 14,
-            y + 17 * row,
-            words,
-            size=view.size + 5 if row == 0 else view.size - 1,
-            bold=row == 0,
-        )
-
-
-def _notes(view: View) -> list[str]:
-    reading = view.reading
-    notes = [*over_top_texts(reading), reverse_text(reading), *beyond_notes(reading, view.scale)]
-    return [note[:1].upper() + note[1:] for note in notes if note]
-
-
-def _agreement(reading: Reading) -> list[str]:
-    """What the second computation found; no figures of a load that is withheld."""
-    if reading.assessed is None:
-        return ["second computation disagrees:", "no result is shown"]
-    index, system = reading.index, reading.system
-    first, second = (
-        show(abs(float(result.horizontal[index])), "force", system, _COMPARED_DIGITS)
-        for result in (reading.assessed.resultant, reading.assessed.recheck)
-    )
-    return ["second computation agrees:", f"{first} against {second}"]

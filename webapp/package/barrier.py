@@ -11,13 +11,15 @@ from loads.assessment import Assessed, Assessment, Withheld
 from loads.recheck import FITTED_TOLERANCE, STRAIGHT_TOLERANCE
 from loads.worked_step import Step, Term
 from loads.working import working
-from webapp.display import System, barrier_title, elevation
+from webapp.display import PRINT_DIGITS, System, barrier_title, elevation
 from webapp.package.drawings import Drawing, section_drawing
 from webapp.package.grid import Grid, Heading, grid_of, words
 from webapp.package.states import State
 from webapp.package.tables import RESULT_DIGITS, checks_grid, level_rows, states_grid
 from webapp.step_text import figure, line_text, tiny, unit_of, with_unit
 
+DISAGREEMENT_DIGITS = 10
+"""Significant figures of two results that disagree; a difference that counts is then seen."""
 _NIL = 1e-9
 
 
@@ -78,7 +80,7 @@ def withheld_view(barrier: Withheld, system: System, datum: str) -> WithheldView
     """Text of a withheld barrier."""
     names = (("horizontal force H", "force"), ("moment about the bottom edge M", "moment"))
     rows = tuple(
-        _pair(name, kind, both, system)
+        _pair(name, kind, both, system, DISAGREEMENT_DIGITS)
         for (name, kind), both in zip(names, zip(barrier.first, barrier.second, strict=True), strict=True)
     )
     return WithheldView(
@@ -198,11 +200,13 @@ def _second(barrier: Assessed, system: System) -> Grid:
     return Grid(headings=_second_headings(), rows=rows)
 
 
-def _pair(name: str, kind: str, both: tuple[float, float], system: System) -> tuple[str, ...]:
+def _pair(
+    name: str, kind: str, both: tuple[float, float], system: System, digits: int = PRINT_DIGITS
+) -> tuple[str, ...]:
     first, second = both
     larger = max(abs(first), abs(second))
     apart = abs(first - second) / larger if larger else 0.0
-    return (name, with_unit(first, kind, system), with_unit(second, kind, system), tiny(apart))
+    return (name, *(with_unit(value, kind, system, digits) for value in both), tiny(apart))
 
 
 def step_view(step: Step, system: System, datum: str) -> StepView:

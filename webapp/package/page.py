@@ -11,7 +11,7 @@ from typing import Any
 from jinja2 import Environment, FileSystemLoader, StrictUndefined
 from markupsafe import Markup, escape
 
-from loads.assessment import Assessed, Assessment, Barrier, assess
+from loads.assessment import Assessed, Assessment, Barrier, Withheld, assess
 from loads.cautions import ASSUMPTIONS, CAUTIONS, HEADLINE, NOT_COUNTED
 from loads.document import check_code
 from loads.method import METHODS
@@ -219,6 +219,8 @@ def _governing(many: Assessment, names: list[str]) -> list[str]:
         for i, ratio in enumerate(check.ratio)
         if not math.isnan(ratio)
     ]
+    if not found and any(isinstance(barrier, Withheld) for barrier in many.barriers):
+        return ["Results are withheld, so no ratio is given."]
     if not found:
         return ["No limit was entered for any barrier, so nothing governs."]
     now = max((item for item in found if item[1] == 0), key=lambda item: item[0])

@@ -4,7 +4,7 @@ import streamlit as st
 
 from loads.assessment import assess
 from loads.document import check_code, input_digest
-from webapp import form_parts, markup, parts, state
+from webapp import form_parts, markup, parts, qr, state
 from webapp.answer import answer
 from webapp.links import MAX_LINK_CHARACTERS, LinkError
 from webapp.pdf import pdf_available
@@ -21,6 +21,9 @@ st.subheader("Frozen link")
 try:
     link = parts.frozen_link()
     st.code(link, language=None, wrap_lines=True)
+    picture = qr.qr_svg(link)
+    if picture:
+        st.markdown(markup.block(f'<div class="sh-qr">{picture}</div>'), unsafe_allow_html=True)
     st.markdown(
         f"The whole scenario stands in the link ({len(link)} characters); nothing is kept on the server. "
         "Whoever holds the link holds the plan: levels, limits and all. "

@@ -1,0 +1,1 @@
+"""Stop-log closures: logs, posts, anchors, seals, overflow and handling."""

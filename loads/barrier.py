@@ -150,9 +150,8 @@ class Assessed:
         The second computation.
     checks
         In order of how pressing they are in the first state.
-    first_limits
-        The level at which each load limit is reached, lowest first, with the protected side as in the first
-        state; where no limit is reached, the one record that says so. Empty without a load limit.
+    first_limit
+        The first-limit level with the protected side as in the first state; None without a load limit.
     remarks
         On the first state.
     parts
@@ -167,7 +166,7 @@ class Assessed:
     resultant: Resultant
     recheck: Recheck
     checks: Checks
-    first_limits: tuple[FirstLimit, ...]
+    first_limit: FirstLimit | None
     remarks: tuple[str, ...]
     parts: Sequence[Part] = ()
 
@@ -175,11 +174,6 @@ class Assessed:
     def levels(self) -> Levels:
         """The states."""
         return self.setting.levels
-
-    @property
-    def first_limit(self) -> FirstLimit | None:
-        """The first-limit level; None without a load limit."""
-        return self.first_limits[0] if self.first_limits else None
 
     @cached_property
     def by_load(self) -> dict[str, Resultant]:

@@ -51,8 +51,8 @@ NOT_COUNTED = (
 ASSUMPTIONS = (
     "Levels are still-water levels at the barrier, in the scenario's datum.",
     (
-        "Water presses at right angles to the face, with a unit weight that is the same at every depth on its "
-        "side."
+        "Water presses at right angles to the face, with a unit weight that is the same at every depth on "
+        "its side."
     ),
     "Pore water in sediment stands at the water level of its side.",
     "Above water soil has its moist unit weight, below water its saturated one less that of the water.",

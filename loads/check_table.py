@@ -130,30 +130,39 @@ class Checks(Built[Check]):
     """
 
     def __init__(self, entries: Entries) -> None:
-        self._entries = entries
         columns = [entry.ratio if entry.ratio.ndim == 2 else entry.ratio[:, None] for entry in entries]
-        self.ratio: FloatArray = np.concatenate(columns, axis=1) if columns else np.zeros((1, 0))
-        places = [(entry, column) for entry, own in zip(entries, columns, strict=True)
-                  for column in range(own.shape[1])]
-        pressing = np.where(np.isnan(self.ratio[0]), -1.0, self.ratio[0])
+        ratio: FloatArray = np.concatenate(columns, axis=1) if columns else np.zeros((1, 0))
+        pressing = np.where(np.isnan(ratio[0]), -1.0, ratio[0])
         order = np.argsort(-pressing, kind="stable")
-        self._places = [places[index] for index in order]
-        self.ratio = self.ratio[:, order]
-        super().__init__(len(places), self._make)
+        counts = [column.shape[1] for column in columns]
+        self._entries = entries
+        self._entry = np.repeat(np.arange(len(counts)), counts)[order]
+        self._column = np.concatenate([np.arange(count) for count in (*counts, 0)])[order]
+        self.ratio: FloatArray = ratio[:, order]
+        super().__init__(len(order), self._make)
 
     def _make(self, index: int) -> Check:
-        entry, column = self._places[index]
-        return entry if isinstance(entry, Check) else entry.check(column)
+        entry = self._entries[self._entry[index]]
+        return entry if isinstance(entry, Check) else entry.check(int(self._column[index]))
 
     @cached_property
     def limited(self) -> BoolArray:
         """Which checks have a limit, shape (c,)."""
-        return np.array([_limit(*place) is not None for place in self._places], dtype=bool)
+        of_entry = [
+            np.array([entry.limit is not None])
+            if isinstance(entry, Check)
+            else np.array([limit is not None for limit in entry.limits])
+            for entry in self._entries
+        ]
+        return np.array(
+            [of_entry[entry][column] for entry, column in zip(self._entry, self._column, strict=True)],
+            dtype=bool,
+        )
 
     @cached_property
     def severity(self) -> FloatArray:
         """Place of every check's verdict in `SEVERITY`, shape (n, c)."""
-        near = np.array([entry.near for entry, _ in self._places])
+        near = np.array([entry.near for entry in self._entries] or [1.0])[self._entry]
         # so worded that what is no number is never below
         above = ~(self.ratio <= 1 + ROUNDING)
         graded = np.where(above, 3.0, np.where(self.ratio >= near - ROUNDING, 2.0, 1.0))
@@ -162,10 +171,7 @@ class Checks(Built[Check]):
     @cached_property
     def subjects(self) -> tuple[str, ...]:
         """What each check is about."""
-        return tuple(
-            entry.subject if isinstance(entry, Check) else entry.subjects[column]
-            for entry, column in self._places
-        )
+        return tuple(check.subject for check in self)
 
     def verdict(self, index: int = 0) -> Verdict:
         """Most pressing verdict of one state."""
@@ -175,7 +181,3 @@ class Checks(Built[Check]):
         """Most pressing verdict of one subject in one state; "not checked" when it has no check."""
         own = [column for column, name in enumerate(self.subjects) if name == subject]
         return SEVERITY[int(self.severity[index, own].max(initial=0.0))]
-
-
-def _limit(entry: Check | CheckTable, column: int) -> Quantity | None:
-    return entry.limit if isinstance(entry, Check) else entry.limits[column]

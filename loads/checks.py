@@ -88,6 +88,7 @@ def check_of(
     limit: Quantity | None,
     near: float,
     remarks: tuple[str, ...] = (),
+    rises_with_water: bool = True,
 ) -> Check:
     """Hold a demand's magnitude against a limit.
 
@@ -96,9 +97,10 @@ def check_of(
     demand
         Signed demand, shape (n,), in the SI unit of `kind`.
     limit
-        As entered, or None.
+        As entered, or None. Of a limit of nothing any demand is beyond.
     """
     value = limit.value if limit else float("nan")
+    ratio = np.abs(demand) / value if value != 0 else np.where(demand != 0, np.inf, 0.0)
     return Check(
         subject=subject,
         name=name,
@@ -106,10 +108,11 @@ def check_of(
         demand=demand,
         limit=limit,
         limit_value=value,
-        ratio=np.abs(demand) / value,
+        ratio=ratio,
         near=near,
         source=source_text(limit),
         remarks=remarks,
+        rises_with_water=rises_with_water,
     )
 
 

@@ -100,6 +100,13 @@ class Diagram:
         """Return the diagram shifted up by a height."""
         return Diagram(knot=self.knot + height, step=self.step, slope=self.slope)
 
+    def shortened(self) -> Diagram:
+        """Return the diagram without terms that are nil in every state."""
+        counts = (self.step != 0).any(axis=0) | (self.slope != 0).any(axis=0)
+        if counts.all():
+            return self
+        return Diagram(knot=self.knot[:, counts], step=self.step[:, counts], slope=self.slope[:, counts])
+
     def take(self, index: int) -> Diagram:
         """Return one state as a diagram with n = 1."""
         rows = slice(index, index + 1)
@@ -171,9 +178,9 @@ class Diagram:
 
         Notes
         -----
-        A ramp that starts above a strip gives F = g·h·(k − middle) and M = g·h²/2·(k − (a + 2h/3)), products of a
-        state's figures with a strip's; where these change sign the strip is dry. The one strip in which a ramp
-        starts is put right on its own. That is six array passes a ramp.
+        A ramp that starts above a strip gives F = g·h·(k − middle) and M = g·h²/2·(k − (a + 2h/3)), products
+        of a state's figures with a strip's; where these change sign the strip is dry. The one strip in which
+        a ramp starts is put right on its own. That is six array passes a ramp.
         """
         low, high = edges[:-1], edges[1:]
         height = high - low

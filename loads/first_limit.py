@@ -2,16 +2,19 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 
 import numpy as np
+from numpy.typing import NDArray
 
 from loads.arrays import BoolArray, FloatArray
 
 RESOLUTION = 0.001
 """Accuracy of a first-limit level. [m]"""
-_POINTS = 33
+_POINTS, _INNER_POINTS = 33, 9
+_FEW = 4
+"""Up to so many checks a wider sweep is quicker than more of them."""
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -37,6 +40,51 @@ class FirstLimit:
     ceiling: float
 
 
+def first_of(
+    names: Sequence[tuple[str, str]], ratios: Callable[[FloatArray], FloatArray], *, low: float, high: float
+) -> FirstLimit:
+    """First-limit level of several checks: where the largest ratio of all reaches 1.
+
+    Parameters
+    ----------
+    names
+        Subject and name of each check, c of them.
+    ratios
+        As for `crossing_levels`.
+    low, high
+        Range of levels searched. [m]
+    """
+
+    def largest(levels: FloatArray) -> FloatArray:
+        return np.asarray(np.fmax.reduce(ratios(levels), axis=1)[:, None])
+
+    level, reached, at_low = crossing_levels(largest, low=low, high=high)
+    if not reached[0]:
+        return FirstLimit(level=None, subject="", check="", without_water=False, ceiling=high)
+    subject, check = names[int(np.nanargmax(ratios(level)[0]))]
+    return FirstLimit(
+        level=float(level[0]), subject=subject, check=check, without_water=bool(at_low[0]), ceiling=high
+    )
+
+
+def each_of(
+    names: Sequence[tuple[str, str]], ratios: Callable[[FloatArray], FloatArray], *, low: float, high: float
+) -> tuple[FirstLimit, ...]:
+    """Level at which each check reaches its limit, the lowest first; those that reach none are left out."""
+    level, reached, at_low = crossing_levels(ratios, low=low, high=high)
+    order = [int(column) for column in np.argsort(level, kind="stable") if reached[column]]
+    return tuple(
+        FirstLimit(
+            level=float(level[column]),
+            subject=names[column][0],
+            check=names[column][1],
+            without_water=bool(at_low[column]),
+            ceiling=high,
+        )
+        for column in order
+    )
+
+
 def crossing_levels(
     ratios: Callable[[FloatArray], FloatArray], *, low: float, high: float
 ) -> tuple[FloatArray, BoolArray, BoolArray]:
@@ -58,26 +106,38 @@ def crossing_levels(
 
     Notes
     -----
-    Each sweep cuts every check's bracket into 32; the last bracket is interpolated. Accuracy `RESOLUTION`.
+    Each sweep cuts the brackets that are left into equal parts, brackets that several checks share once; the
+    last one is interpolated. Accuracy `RESOLUTION`.
     """
     first = ratios(np.linspace(low, high, _POINTS))
-    count = first.shape[1]
     at_low = first[0] >= 1
     reached = np.asarray((first >= 1).any(axis=0))
-    index = np.maximum(np.argmax(first >= 1, axis=0), 1)
-    width = (high - low) / (_POINTS - 1)
-    start = low + (index - 1) * width
-    columns = np.arange(count)
-    below, above = first[index - 1, columns], first[index, columns]
-    while width > RESOLUTION / 4 and reached.any():
-        inner = start[:, None] + width * np.linspace(0, 1, _POINTS)[None, :]
-        values = ratios(inner.ravel())
-        own = values.reshape(count, _POINTS, count)[columns, :, columns]
-        index = np.maximum(np.argmax(own >= 1, axis=1), 1)
-        width = width / (_POINTS - 1)
+    level = np.where(at_low, low, np.nan)
+    columns = np.flatnonzero(reached & ~at_low)
+    if len(columns):
+        width = (high - low) / (_POINTS - 1)
+        index = np.argmax(first[:, columns] >= 1, axis=0)
+        level[columns] = _narrowed(ratios, columns, low + (index - 1) * width, width)
+    return level, reached, at_low
+
+
+def _narrowed(
+    ratios: Callable[[FloatArray], FloatArray], columns: NDArray[np.intp], start: FloatArray, width: float
+) -> FloatArray:
+    """Level within a bracket of one width at which each of the columns reaches 1."""
+    points = _POINTS if len(columns) <= _FEW else _INNER_POINTS
+    each = np.arange(len(columns))
+    while True:
+        starts, own = np.unique(start, return_inverse=True)
+        inner = starts[:, None] + width * np.linspace(0, 1, points)[None, :]
+        values = ratios(inner.ravel())[:, columns].reshape(len(starts), points, len(columns))
+        mine = values[own, :, each]
+        index = np.maximum(np.argmax(mine >= 1, axis=1), 1)
+        width /= points - 1
         start = start + (index - 1) * width
-        below, above = own[columns, index - 1], own[columns, index]
+        if width <= RESOLUTION / 4:
+            break
+    below, above = mine[each, index - 1], mine[each, index]
     with np.errstate(invalid="ignore", divide="ignore"):
         share = np.clip((1 - below) / (above - below), 0, 1)
-    level = np.where(at_low, low, start + width * np.where(np.isfinite(share), share, 1.0))
-    return np.where(reached, level, np.nan), reached, at_low
+    return np.asarray(start + width * np.where(np.isfinite(share), share, 1.0))

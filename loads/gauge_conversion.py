@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass, replace
+from typing import Final
 
 import numpy as np
 
@@ -10,6 +11,9 @@ from loads.arrays import FloatArray
 from loads.problems import Problem, ScenarioError
 from loads.records.gauge import Gauge, Transfer, datum_problem, same_datum
 from loads.series.series import Series
+
+SAME_LEVEL: Final = 1e-6
+"""Levels closer than this are one and the same: below any survey, above the rounding of units. [m]"""
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -58,7 +62,7 @@ class Conversion:
             return np.full(len(stage), np.nan)
         if self.transfer.table is not None:
             stages, offsets = table_of(self.transfer)
-            return np.interp(stage, stages, offsets, left=np.nan, right=np.nan)
+            return _between_ends(stage, stages, offsets)
         return np.full(len(stage), constant_of(self.transfer))
 
     def level(self, stage: FloatArray) -> FloatArray:
@@ -97,7 +101,7 @@ class Conversion:
             return np.full(len(level), np.nan)
         if self.transfer.table is not None:
             stages, offsets = table_of(self.transfer)
-            return np.interp(level - self.base, stages + offsets, stages, left=np.nan, right=np.nan)
+            return _between_ends(level - self.base, stages + offsets, stages)
         return np.asarray(level - self.base - constant_of(self.transfer), dtype=np.float64)
 
 
@@ -144,6 +148,12 @@ def conversion(gauge: Gauge, barrier: str, datum: str) -> Conversion:
         shift=gauge.datum_shift.value if gauge.datum_shift is not None else 0.0,
         missing=tuple(missing),
     )
+
+
+def _between_ends(at: FloatArray, known: FloatArray, values: FloatArray) -> FloatArray:
+    within = np.clip(at, known[0], known[-1])
+    there = np.abs(at - within) <= SAME_LEVEL
+    return np.where(there, np.interp(within, known, values), np.nan)
 
 
 def constant_of(transfer: Transfer) -> float:

@@ -17,6 +17,7 @@ from loads.series.series import Series
 State = Literal["at", "already past", "not reached in this forecast", "not known"]
 
 ENDLESS = float("inf")
+_ROUNDING = 1e-9
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -94,12 +95,19 @@ def reached(
     tuple of Instant
         One for each stage.
     """
+    stages = _snapped(stages, series.values)
     found = first_reached(series, stages)
     index = np.searchsorted(np.maximum.accumulate(series.values), stages, side="left")
     return tuple(
         _reached_one(series, float(stage), found.times[k], int(index[k]), now, longest_gap)
         for k, stage in enumerate(stages)
     )
+
+
+def _snapped(stages: FloatArray, values: FloatArray) -> FloatArray:
+    """Stages that differ from a value of the series by rounding only become that value."""
+    near = values[np.abs(values[None, :] - stages[:, None]).argmin(axis=1)]
+    return np.where(np.abs(near - stages) <= _ROUNDING, near, stages)
 
 
 def _reached_one(
@@ -145,6 +153,7 @@ def below_for_good(series: Series, stage: float, now: datetime, *, longest_gap: 
     rounded up to a whole second.
     """
     values = series.values
+    stage = float(_snapped(np.array([stage]), values)[0])
     above = np.flatnonzero(values >= stage)
     if len(above) and above[-1] == len(values) - 1:
         return Instant(state="not reached in this forecast", reason="the series ends at or above it")

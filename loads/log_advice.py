@@ -65,8 +65,10 @@ def log_advice(
     if add_logs_until is None:
         return LogAdvice(kind="not known", sentence="nobody entered up to what level logs can be added")
     if level < add_logs_until:
-        return LogAdvice(kind="add logs", sentence="logs can still be added until the water reaches that level")
+        return LogAdvice(
+            kind="add logs", sentence="logs can still be added until the water reaches that level"
+        )
     return LogAdvice(
         kind="back up, withdraw or decide",
-        sentence="the water has reached the level from which no log can be added; whoever is in charge decides",
+        sentence="the water has reached the level from which no log can be added; the one in charge decides",
     )

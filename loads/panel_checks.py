@@ -8,9 +8,9 @@ from loads.arrays import FloatArray
 from loads.checks import Check, check_of, level_check
 from loads.diagram import Diagram
 from loads.faces import ArcFace, CircleFace, Resultant, StripFace
-from loads.first_limit import FirstLimit, crossing_levels
+from loads.first_limit import FirstLimit, first_of
 from loads.load import Setting, loads_on
-from loads.records.panel import Panel
+from loads.records.panel import Limits
 from loads.states import DRY, rising
 
 Face = StripFace | CircleFace | ArcFace
@@ -25,18 +25,24 @@ def peak_pressure(diagram: Diagram, face: Face) -> FloatArray:
     return np.where(greatest >= -least, greatest, least)
 
 
-def load_checks(panel: Panel, pressure: FloatArray, resultant: Resultant, near: float) -> list[Check]:
-    """Checks of what presses on a panel: pressure at a point, total force and moment, each with its sign."""
-    limits = panel.limits
+def load_checks(
+    subject: str,
+    limits: Limits,
+    pressure: FloatArray,
+    resultant: Resultant,
+    near: float,
+    foot: str = "bottom",
+) -> list[Check]:
+    """Checks of what presses on a whole face: pressure at a point, total force and moment, signed."""
     reverse = ("The load pushes toward the flood side; the limit was entered without a direction.",)
     entered = (
         ("pressure at a point", "pressure", pressure, limits.pressure),
         ("total force", "force", resultant.total, limits.force),
-        ("moment about the bottom", "moment", resultant.moment, limits.moment),
+        (f"moment about the {foot}", "moment", resultant.moment, limits.moment),
     )
     return [
         check_of(
-            subject=f"panel {panel.id}",
+            subject=subject,
             name=name,
             kind=kind,
             demand=demand,
@@ -53,7 +59,8 @@ def panel_checks(
 ) -> list[Check]:
     """Checks of a panel: pressure at a point, total force, moment, rated level and freeboard."""
     panel = setting.panel
-    checks = load_checks(panel, peak_pressure(diagram, face), resultant, near)
+    subject = f"panel {panel.id}"
+    checks = load_checks(subject, panel.limits, peak_pressure(diagram, face), resultant, near)
     level = setting.levels.flood_side
     freeboard = panel.limits.freeboard
     for name, limit, highest in (
@@ -66,7 +73,7 @@ def panel_checks(
     ):
         checks.append(
             level_check(
-                subject=f"panel {panel.id}",
+                subject=subject,
                 name=name,
                 level=level,
                 bottom=face.bottom,
@@ -84,32 +91,32 @@ def first_limit_of(setting: Setting, face: Face, near: float) -> FirstLimit | No
     The flood side rises from the bottom of the panel to `SEARCH_ABOVE_TOP` above its top; loads count as they
     push toward the protected side.
     """
-    protected = float(setting.levels.protected_side[0])
     limits = setting.panel.limits
     if limits.pressure is None and limits.force is None and limits.moment is None:
         return None
-    ceiling = max(face.top, float(setting.levels.flood_side.max())) + SEARCH_ABOVE_TOP
 
     def checks_at(flood_side: FloatArray) -> list[Check]:
-        levels = rising(flood_side, protected if np.isfinite(protected) else DRY)
-        swept = Setting(levels=levels, fluids=setting.fluids, panel=setting.panel)
-        diagram = Diagram.joined(load.diagram for load in loads_on(swept))
+        diagram = risen(setting, flood_side)
         greatest, _ = diagram.extremes(face.bottom, face.top)
-        found = load_checks(setting.panel, greatest, face.resultant(diagram), near)
+        subject = f"panel {setting.panel.id}"
+        found = load_checks(subject, limits, greatest, face.resultant(diagram), near)
         return [check for check in found if check.limit is not None]
 
     def ratios(flood_side: FloatArray) -> FloatArray:
         return np.column_stack([check.demand / check.limit_value for check in checks_at(flood_side)])
 
     names = [(check.subject, check.name) for check in checks_at(np.array([face.bottom]))]
-    level, reached, at_low = crossing_levels(ratios, low=face.bottom, high=ceiling)
-    if not reached.any():
-        return FirstLimit(level=None, subject="", check="", without_water=False, ceiling=ceiling)
-    first = int(np.nanargmin(level))
-    return FirstLimit(
-        level=float(level[first]),
-        subject=names[first][0],
-        check=names[first][1],
-        without_water=bool(at_low[first]),
-        ceiling=ceiling,
-    )
+    return first_of(names, ratios, low=face.bottom, high=ceiling_of(setting, face))
+
+
+def ceiling_of(setting: Setting, face: Face) -> float:
+    """Highest level searched for a first limit. [m]."""
+    return max(face.top, float(setting.levels.flood_side.max())) + SEARCH_ABOVE_TOP
+
+
+def risen(setting: Setting, flood_side: FloatArray) -> Diagram:
+    """Net pressure with other flood-side levels and the protected side as in the first state."""
+    protected = float(setting.levels.protected_side[0])
+    levels = rising(flood_side, protected if np.isfinite(protected) else DRY)
+    swept = Setting(levels=levels, fluids=setting.fluids, panel=setting.panel)
+    return Diagram.joined(load.diagram for load in loads_on(swept))

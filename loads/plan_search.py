@@ -13,11 +13,11 @@ from math import comb, factorial
 from typing import Final, Literal, TypeAlias
 
 Cost: TypeAlias = tuple[int, int, int, int]
-"""Of one crew or of a plan: how many late, sum of lateness, largest lateness with its sign, sum of finishes."""
+"""Of a crew or of a plan: how many late, sum of lateness, largest lateness (signed), sum of finishes."""
 
 Objective = Literal["fewest late", "least lateness"]
 
-MAX_TRIALS: Final = 60_000
+MAX_TRIALS: Final = 40_000
 MOST_EXACT: Final = 45_000
 _NONE: Final = -(10**15)
 UNPINNED: Final = 10**9
@@ -51,11 +51,13 @@ class Problem:
         """Cost of one crew's jobs in their order."""
         late, total, worst, finishes = 0, 0, _NONE, 0
         time, move = self.ready[crew] - self.move[crew], self.move[crew]
+        duration, due = self.duration, self.due
         for job in jobs:
-            time += move + (self.duration[job][crew] or 0)
-            over = time - self.due[job]
+            time += move + (duration[job][crew] or 0)
+            over = time - due[job]
             finishes += time
-            worst = max(worst, over)
+            if over > worst:  # noqa: PLR1730 - the innermost line of the search
+                worst = over
             if over > 0:
                 late += 1
                 total += over
@@ -76,12 +78,13 @@ def ranked(cost: Cost, objective: Objective) -> Cost:
 
 def joined(costs: Sequence[Cost]) -> Cost:
     """Cost of a plan from those of its crews."""
-    return (
-        sum(cost[0] for cost in costs),
-        sum(cost[1] for cost in costs),
-        max((cost[2] for cost in costs), default=_NONE),
-        sum(cost[3] for cost in costs),
-    )
+    late, total, worst, finishes = 0, 0, _NONE, 0
+    for cost in costs:
+        late += cost[0]
+        total += cost[1]
+        worst = max(worst, cost[2])
+        finishes += cost[3]
+    return late, total, worst, finishes
 
 
 def earliest_due_first(problem: Problem) -> list[list[int]]:
@@ -105,7 +108,9 @@ def earliest_due_first(problem: Problem) -> list[list[int]]:
     return plan
 
 
-def best_plan(problem: Problem, objective: Objective = "fewest late") -> list[list[int]]:
+def best_plan(
+    problem: Problem, objective: Objective = "fewest late", trials: int = MAX_TRIALS
+) -> list[list[int]]:
     """The best plan found, and the best there is where the problem is small.
 
     Parameters
@@ -115,6 +120,8 @@ def best_plan(problem: Problem, objective: Objective = "fewest late") -> list[li
     objective
         "fewest late" compares how many are late, then the sum of lateness, then the smallest margin, then
         how early all is done; "least lateness" compares the largest lateness first.
+    trials
+        Most trials of the improvement.
 
     Returns
     -------
@@ -124,9 +131,10 @@ def best_plan(problem: Problem, objective: Objective = "fewest late") -> list[li
     Notes
     -----
     Exact, by depth-first search with bounds, while n!·C(n+m−1, m−1) ≤ `MOST_EXACT`: seven jobs and two
-    crews. Beyond that, moves of one job and swaps of two from the worst job on, at most `MAX_TRIALS` trials.
+    crews. Beyond that, moves of one job and swaps of two from the worst job on, about `trials` trials at
+    most.
     """
-    climb = _Climb(problem=problem, objective=objective, plan=earliest_due_first(problem))
+    climb = _Climb(problem=problem, objective=objective, plan=earliest_due_first(problem), trials=trials)
     climb.run()
     jobs, crews = len(problem.doable()), len(problem.ready)
     if jobs and factorial(jobs) * comb(jobs + crews - 1, crews - 1) <= MOST_EXACT:
@@ -149,24 +157,25 @@ class _Climb:
     problem: Problem
     objective: Objective
     plan: list[list[int]]
-    trials: int = 0
+    trials: int
     costs: list[Cost] = field(default_factory=list)
+    pinned: bool = False
 
     def run(self) -> None:
         self.costs = [self.problem.cost(crew, jobs) for crew, jobs in enumerate(self.plan)]
-        while self.trials < MAX_TRIALS and self._improved():
+        self.pinned = any(pin != UNPINNED for pin in self.problem.pin)
+        while self.trials > 0 and self._improved():
             pass
 
     def _improved(self) -> bool:
-        now = self._ranked({})
         for crew, place in self._worst_first():
-            job = self.plan[crew][place]
-            for target in range(len(self.plan)):
-                if self.trials >= MAX_TRIALS:
+            row = self.problem.duration[self.plan[crew][place]]
+            for target, time in enumerate(row):
+                if self.trials <= 0:
                     return False
-                if self.problem.duration[job][target] is None:
-                    continue
-                if self._moved(crew, place, target, now) or self._swapped(crew, place, target, now):
+                if time is not None and (
+                    self._moved(crew, place, target) or self._swapped(crew, place, target)
+                ):
                     return True
         return False
 
@@ -179,43 +188,50 @@ class _Climb:
                 places.append((self.problem.due[job] - time, crew, place))
         return [(crew, place) for _, crew, place in sorted(places)]
 
-    def _ranked(self, changed: dict[int, Cost]) -> Cost:
-        costs = [changed.get(crew, cost) for crew, cost in enumerate(self.costs)]
+    def _others(self, crew: int, target: int) -> Cost:
+        return joined([cost for one, cost in enumerate(self.costs) if one not in (crew, target)])
+
+    def _ranked(self, *costs: Cost) -> Cost:
         return ranked(joined(costs), self.objective)
 
-    def _take(self, changed: dict[int, list[int]], now: Cost) -> bool:
-        self.trials += 1
-        if not all(in_pinned_order(self.problem, jobs) for jobs in changed.values()):
-            return False
-        costs = {crew: self.problem.cost(crew, jobs) for crew, jobs in changed.items()}
-        if self._ranked(costs) >= now:
-            return False
-        for crew, jobs in changed.items():
-            self.plan[crew], self.costs[crew] = jobs, costs[crew]
-        return True
+    def _allowed(self, jobs: Sequence[int]) -> bool:
+        self.trials -= 1
+        return not self.pinned or in_pinned_order(self.problem, jobs)
 
-    def _moved(self, crew: int, place: int, target: int, now: Cost) -> bool:
-        job = self.plan[crew][place]
+    def _moved(self, crew: int, place: int, target: int) -> bool:
+        job, others = self.plan[crew][place], self._others(crew, target)
         rest = self.plan[crew][:place] + self.plan[crew][place + 1 :]
-        into = rest if target == crew else self.plan[target]
+        same = target == crew
+        into = rest if same else self.plan[target]
+        left = (0, 0, _NONE, 0) if same else self.problem.cost(crew, rest)
+        now = self._ranked(*self.costs)
         for position in range(len(into) + 1):
-            if target == crew and position == place:
-                continue
             jobs = [*into[:position], job, *into[position:]]
-            if self._take({crew: rest, target: jobs}, now):
+            if not self._allowed(jobs):
+                continue
+            cost = self.problem.cost(target, jobs)
+            if self._ranked(others, left, cost) < now:
+                self.plan[crew], self.costs[crew] = rest, left
+                self.plan[target], self.costs[target] = jobs, cost
                 return True
         return False
 
-    def _swapped(self, crew: int, place: int, target: int, now: Cost) -> bool:
-        job = self.plan[crew][place]
+    def _swapped(self, crew: int, place: int, target: int) -> bool:
+        if target == crew:
+            return False
+        job, others = self.plan[crew][place], self._others(crew, target)
+        now = self._ranked(*self.costs)
         for position, other in enumerate(self.plan[target]):
-            if self.problem.duration[other][crew] is None or (target == crew and position <= place):
+            if self.problem.duration[other][crew] is None:
                 continue
             ours, theirs = list(self.plan[crew]), list(self.plan[target])
-            if target == crew:
-                theirs = ours
             ours[place], theirs[position] = other, job
-            if self._take({crew: ours, target: theirs}, now):
+            if not (self._allowed(ours) and in_pinned_order(self.problem, theirs)):
+                continue
+            our_cost, their_cost = self.problem.cost(crew, ours), self.problem.cost(target, theirs)
+            if self._ranked(others, our_cost, their_cost) < now:
+                self.plan[crew], self.costs[crew] = ours, our_cost
+                self.plan[target], self.costs[target] = theirs, their_cost
                 return True
         return False
 

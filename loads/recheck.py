@@ -25,8 +25,7 @@ STRAIGHT_TOLERANCE = 1e-9
 FITTED_TOLERANCE = 1e-6
 """The same for circles and arcs."""
 
-_NODES, _WEIGHTS = np.polynomial.legendre.leggauss(4)
-_FINE_NODES, _FINE_WEIGHTS = np.polynomial.legendre.leggauss(24)
+_RULE, _FINE_RULE = (np.polynomial.legendre.leggauss(points) for points in (4, 24))
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -130,7 +129,7 @@ def _unfloored(ground: _Ground, index: int, z: FloatArray) -> FloatArray:
     return coefficient * stress - cohesion_pressure(ground.layers[index], coefficient)
 
 
-def _breaks(setting: Setting, bottom: float, top: float, corners: FloatArray) -> FloatArray:
+def breaks_between(setting: Setting, bottom: float, top: float, corners: FloatArray) -> FloatArray:
     """Sorted elevations between which the pressure and the outline are smooth, shape (n, m)."""
     states = setting.levels.states
     columns = [np.full(states, value) for value in (bottom, top, *corners)]
@@ -168,8 +167,11 @@ def _may_be_tension(ground: _Ground, index: int) -> bool:
     return lightest < 0 or bool(layer.cohesion and layer.cohesion.value > 0)
 
 
-def _points(breaks: FloatArray, nodes: FloatArray, weights: FloatArray) -> tuple[FloatArray, FloatArray]:
-    """Quadrature points and weights on every piece, each of shape (n, pieces · nodes)."""
+def quadrature_points(
+    breaks: FloatArray, rule: tuple[FloatArray, FloatArray] = _RULE
+) -> tuple[FloatArray, FloatArray]:
+    """Points and weights on every piece, (n, m): exact up to the seventh degree by the usual rule."""
+    nodes, weights = rule
     low, high = breaks[:, :-1, None], breaks[:, 1:, None]
     z = (low + high) / 2 + (high - low) / 2 * nodes
     w = (high - low) / 2 * weights
@@ -183,8 +185,8 @@ def _straight(setting: Setting, panel: Panel) -> tuple[FloatArray, FloatArray, F
     bottom = panel.bottom.value
     corner_heights = np.unique(shapely.get_coordinates(outline)[:, 1])
     top = bottom + float(corner_heights[-1]) * sine
-    breaks = _breaks(setting, bottom, top, bottom + corner_heights * sine)
-    z, w = _points(breaks, _NODES, _WEIGHTS)
+    breaks = breaks_between(setting, bottom, top, bottom + corner_heights * sine)
+    z, w = quadrature_points(breaks)
     height = (z - bottom) / sine
     push = pressure_at(setting, z) * _chords(panel, outline, height) * w / sine
     normal = push.sum(axis=1)
@@ -227,9 +229,9 @@ def _circle(setting: Setting, panel: Panel) -> tuple[FloatArray, FloatArray, Flo
     assert panel.diameter is not None
     sine, cosine = math.sin(panel.tilt_angle), math.cos(panel.tilt_angle)
     radius, bottom = panel.diameter.value / 2, panel.bottom.value
-    breaks = _breaks(setting, bottom, bottom + 2 * radius * sine, np.zeros(0))
+    breaks = breaks_between(setting, bottom, bottom + 2 * radius * sine, np.zeros(0))
     angles = np.arcsin(np.clip((breaks - bottom) / (radius * sine) - 1, -1, 1))
-    angle, w = _points(angles, _FINE_NODES, _FINE_WEIGHTS)
+    angle, w = quadrature_points(angles, _FINE_RULE)
     height = radius * (1 + np.sin(angle))
     push = pressure_at(setting, bottom + height * sine) * 2 * radius**2 * np.cos(angle) ** 2 * w
     normal = push.sum(axis=1)
@@ -241,12 +243,12 @@ def _arc(setting: Setting, panel: Panel) -> tuple[FloatArray, FloatArray, FloatA
     assert panel.width is not None
     arc, bottom = panel.arc_shape(), panel.bottom.value
     top = bottom + arc.height
-    breaks = _breaks(setting, bottom, top, np.zeros(0))
+    breaks = breaks_between(setting, bottom, top, np.zeros(0))
     foot = math.atan2(-arc.centre_z, -arc.bulge * arc.centre_x)
     head = math.atan2(arc.height - arc.centre_z, arc.bulge * (arc.offset - arc.centre_x))
     inner = np.arcsin(np.clip((breaks - bottom - arc.centre_z) / arc.radius, -1, 1))
     angles = np.where(breaks <= bottom, foot, np.where(breaks >= top, head, np.clip(inner, foot, head)))
-    angle, w = _points(angles, _FINE_NODES, _FINE_WEIGHTS)
+    angle, w = quadrature_points(angles, _FINE_RULE)
     rise = arc.centre_z + arc.radius * np.sin(angle)
     x = arc.centre_x + arc.bulge * arc.radius * np.cos(angle)
     push = pressure_at(setting, bottom + rise) * panel.width.value * arc.radius * w
@@ -282,13 +284,11 @@ def recheck(
         Agreement and both figures. Relative tolerance 1e-9, for circles and arcs 1e-6.
     """
     panel = setting.panel
-    route = {"circle": _circle, "arc": _arc}.get(panel.shape, _straight)
-    again = route(setting, panel)
+    again = {"circle": _circle, "arc": _arc}.get(panel.shape, _straight)(setting, panel)
     tolerance = FITTED_TOLERANCE if panel.shape in ("circle", "arc") else STRAIGHT_TOLERANCE
-    rounding_moment = rounding_force * reach
     difference = np.zeros(setting.levels.states)
     agrees = np.ones(setting.levels.states, dtype=bool)
-    roundings = (rounding_force, rounding_force, rounding_moment)
+    roundings = (rounding_force, rounding_force, rounding_force * reach)
     for first, second, rounding in zip((horizontal, vertical, moment), again, roundings, strict=True):
         apart = np.abs(first - second)
         larger = np.maximum(np.abs(first), np.abs(second))

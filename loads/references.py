@@ -7,7 +7,7 @@ A docstring cites a work as ``[Key]``; a test of literature cites it as
 from __future__ import annotations
 
 from loads.reference import Reference, Status, textbook
-from loads.references_closure import HANDLING, LEAKAGE, OVERFLOW
+from loads.references_closure import HANDLING, LEAKAGE, MEMBERS, OVERFLOW
 from loads.references_wall import WALLS
 
 __all__ = ["REFERENCES", "Reference", "Status"]
@@ -240,6 +240,7 @@ REFERENCES: dict[str, Reference] = {
         _MECHANICS,
         _TEXTBOOKS,
         _PRACTICE,
+        MEMBERS,
         OVERFLOW,
         LEAKAGE,
         HANDLING,

@@ -53,6 +53,17 @@ OVERFLOW: Final = (
     ),
 )
 
+MEMBERS: Final = (
+    Reference(
+        key="ElementaryBeamTheory",
+        citation="Elementary theory of bending: plane sections, small deflections, one modulus; simple beam "
+        "under an even load, cantilever, prop, bolts of a stiff plate in proportion to their distance",
+        edition="none",
+        status="common practice, no source",
+    ),
+    textbook("Gere", "J. M. Gere, Mechanics of Materials"),
+)
+
 LEAKAGE: Final = (
     Reference(
         key="Torricelli",

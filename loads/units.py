@@ -53,6 +53,8 @@ _EXPRESSIONS: dict[str, dict[str, str]] = {
         "klf": "kip/foot",
         "kN/m": "kilonewton/meter",
         "N/m": "newton/meter",
+        "lb/in": "lbf/inch",
+        "N/mm": "newton/millimeter",
     },
     "moment": {
         "lb·ft": "lbf*foot",
@@ -66,6 +68,8 @@ _EXPRESSIONS: dict[str, dict[str, str]] = {
         "kN·m": "kilonewton*meter",
         "kN-m": "kilonewton*meter",
         "kNm": "kilonewton*meter",
+        "lb·in": "lbf*inch",
+        "N·mm": "newton*millimeter",
     },
     "moment per length": {"lb·ft/ft": "lbf*foot/foot", "kN·m/m": "kilonewton*meter/meter", "N·m/m": "newton"},
     "angle": {"deg": "degree", "°": "degree", "rad": "radian"},
@@ -151,6 +155,13 @@ SI_UNITS = {
     "flow": "m³/s",
     "flow per length": "m²/s",
     "number": "",
+    "deflection": "m",
+    "section second moment": "m⁴",
+    "section area": "m²",
+    "part length": "m",
+    "part force": "N",
+    "part line load": "N/m",
+    "part moment": "N·m",
 }
 """Unit in which each kind is computed and printed as JSON."""
 

@@ -7,8 +7,9 @@ from __future__ import annotations
 
 import math
 
-from loads.assessment import Assessed
+from loads.assessment import Assessed, AssessedClosure
 from loads.checks import Check
+from loads.closure.working import closure_steps
 from loads.faces import ArcFace, CircleFace, StripFace
 from loads.load import SIDES
 from loads.worked_step import Line, Step, Table, Term, line, term
@@ -42,6 +43,8 @@ def working(barrier: Assessed, index: int = 0) -> tuple[Step, ...]:
         steps += [*segments(barrier, face, index), _resultant(barrier, face, index)]
     else:
         steps += arc_steps(barrier, face, index)
+    if isinstance(barrier, AssessedClosure):
+        steps += closure_steps(barrier, index)
     ratios = _ratios(barrier, index)
     return (*steps, ratios) if ratios.lines else tuple(steps)
 
@@ -206,10 +209,12 @@ def _upright_line(bottom: float, horizontal: float, moment: float, height: float
 
 def _ratios(barrier: Assessed, index: int) -> Step:
     lines = []
+    named: set[str] = set()
     for check in barrier.checks:
-        stands = check.kind != "elevation" or check.limit_value > barrier.face.bottom
-        if check.limit is not None and stands:
+        stands = check.limit_value > (barrier.face.bottom if check.kind == "elevation" else 0.0)
+        if check.limit is not None and stands and check.name not in named:
             lines.append(_ratio_line(barrier, check, index))
+            named.add(check.name)
     return Step(
         title="Ratios to the limits entered",
         formula="ratio = |demand|/limit; of a level: head on the bottom edge over the head at the limit",
@@ -221,7 +226,10 @@ def _ratio_line(barrier: Assessed, check: Check, index: int) -> Line:
     ratio, demand = float(check.ratio[index]), float(check.demand[index])
     if check.kind != "elevation":
         values = ((abs(demand), check.kind), (check.limit_value, check.kind), (ratio, "ratio"))
-        return line("ratio = {}/{} = {}", *values, label=check.name)
+        part = not check.subject.startswith(barrier.record.kind)
+        return line(
+            "ratio = {}/{} = {}", *values, label=f"{check.subject}, {check.name}" if part else check.name
+        )
     bottom = barrier.face.bottom
     return line(
         "ratio = (L_f − z₀)/(z_limit − z₀) = ({} − {})/({} − {}) = {}",
@@ -238,4 +246,4 @@ def _level_words(check: Check) -> str:
     if check.name != "freeboard":
         return check.name
     assert check.limit is not None
-    return f"freeboard, limit level z₁ less the {check.limit.text} entered"
+    return f"freeboard, limit level the top less the {check.limit.text} entered"

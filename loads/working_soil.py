@@ -19,7 +19,7 @@ def soil_steps(barrier: Assessed, index: int) -> list[Step]:
     """Steps of the sediment of both sides; none where there is none."""
     steps: list[Step] = []
     for side in SIDES:
-        layers = barrier.record.layers(side)
+        layers = barrier.setting.panel.layers(side)
         soils = [(number, layer) for number, layer in enumerate(layers, 1) if not layer.is_fluid]
         if soils:
             steps.append(_coefficients(barrier, side, soils))
@@ -30,7 +30,7 @@ def soil_steps(barrier: Assessed, index: int) -> list[Step]:
 
 
 def _coefficients(barrier: Assessed, side: str, soils: list[tuple[int, Sediment]]) -> Step:
-    tilt = tilt_from(side, barrier.record.tilt_angle)
+    tilt = tilt_from(side, barrier.setting.panel.tilt_angle)
     water = barrier.setting.fluids[side].unit_weight
     lines: list[Line] = []
     for number, layer in soils:
@@ -131,7 +131,7 @@ def _wedge_lines(layer: Sediment, tilt: float, ratio: float, label: str) -> list
 
 
 def _stresses(barrier: Assessed, side: str, index: int) -> Step:
-    ground = barrier.record.layers(side)[0].surcharge
+    ground = barrier.setting.panel.layers(side)[0].surcharge
     headings = (
         ("layer", "text"),
         ("from z", "elevation"),
@@ -158,8 +158,8 @@ def _stresses(barrier: Assessed, side: str, index: int) -> Step:
 
 def _feet(barrier: Assessed, side: str) -> list[tuple[str, Sediment, float]]:
     """Layers of one side, each with its short name and the elevation of its foot."""
-    layers = barrier.record.layers(side)
-    feet = [layer.top.value for layer in layers[1:]] + [barrier.record.bottom.value]
+    layers = barrier.setting.panel.layers(side)
+    feet = [layer.top.value for layer in layers[1:]] + [barrier.setting.panel.bottom.value]
     return [
         (layer_name(layer, number, side).removesuffix(f", {side} side"), layer, foot)
         for number, (layer, foot) in enumerate(zip(layers, feet, strict=True), 1)
@@ -169,8 +169,8 @@ def _feet(barrier: Assessed, side: str) -> list[tuple[str, Sediment, float]]:
 def _stress_rows(barrier: Assessed, side: str, index: int) -> list[tuple[Cell, ...]]:
     level = float(barrier.levels.of(side)[index])
     water = barrier.setting.fluids[side].unit_weight
-    tilt = tilt_from(side, barrier.record.tilt_angle)
-    ground = barrier.record.layers(side)[0].surcharge
+    tilt = tilt_from(side, barrier.setting.panel.tilt_angle)
+    ground = barrier.setting.panel.layers(side)[0].surcharge
     stress = ground.value if ground else 0.0
     rows: list[tuple[Cell, ...]] = []
     for name, layer, foot in _feet(barrier, side):

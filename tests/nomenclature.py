@@ -1,4 +1,8 @@
-"""The public quantities of the engine, read from its code: record fields, results, parameters with a unit."""
+"""The public quantities of the engine, read from its code: record fields, results, parameters with a unit.
+
+`python -m tests.nomenclature` brings loads/NOMENCLATURE.md up to date: rows of quantities that are gone are
+taken out, new ones are put in with what the code says of them, and all others stay as somebody wrote them.
+"""
 
 from __future__ import annotations
 
@@ -7,7 +11,9 @@ import importlib
 import inspect
 import pkgutil
 import re
+import sys
 from collections.abc import Iterable, Iterator
+from pathlib import Path
 from types import ModuleType
 from typing import Any, NamedTuple, get_args
 
@@ -15,6 +21,8 @@ import loads
 from loads.records.base import Measure, Record
 from loads.units import SI_UNITS
 
+PAGE = Path(loads.__file__).parent / "NOMENCLATURE.md"
+UNTOLD = "?"
 OF_ITS_KIND = "of its kind"
 """Unit of a field that holds a value of any kind, in the SI base unit of that kind."""
 
@@ -23,6 +31,9 @@ _NO_QUANTITY = {("Scenario", "format")}
 _SECTION = re.compile(r"(Parameters|Attributes)\n-+\n(.*?)(?=\n\S[^\n]*\n-{3,}|\Z)", re.DOTALL)
 _ENTRY = re.compile(r"^(\w+(?:, \w+)*)(?: :[^\n]*)?\n((?: +[^\n]+\n?|\n)+)", re.MULTILINE)
 _UNIT = re.compile(r"\[([^\[\]]+)\]\.?\s*$")
+_SHAPE = re.compile(
+    r"(?:, )?(?:each )?(?:of )?(?:shape )?(?:\([nmkbqs](?:,| ?[-−+,] ?\w)*\)(?: or )?)+", re.IGNORECASE
+)
 
 
 class Quantity(NamedTuple):
@@ -133,3 +144,37 @@ def entries(text: str | None, section: str) -> Iterator[tuple[list[str], str]]:
         if title == section:
             for names, told in _ENTRY.findall(body + "\n"):
                 yield names.split(", "), " ".join(told.split())
+
+
+def rows(page: str) -> list[tuple[str, ...]]:
+    """Cells of the table: name, symbol, unit, meaning."""
+    lines = [line for line in page.splitlines() if line.startswith("| ")]
+    return [tuple(cell.strip() for cell in line.strip("|").split("|")) for line in lines[1:]]
+
+
+def row_of(quantity: Quantity) -> tuple[str, str, str, str]:
+    """Row of a quantity as the code describes it."""
+    told = _SHAPE.sub("", _UNIT.sub("", quantity.meaning)).strip(" .,;|")
+    meaning = told[:1].upper() + told[1:] if len(told) > 1 else UNTOLD
+    return (quantity.name, "–", quantity.unit, meaning.replace("|", "¦"))
+
+
+def brought_up_to_date(page: str, found: Iterable[Quantity]) -> str:
+    """Page with a row for each quantity, those already described as they are."""
+    described: dict[tuple[str, str], tuple[str, ...]] = {}
+    for quantity in found:
+        row = row_of(quantity)
+        before = described.get((quantity.name, quantity.unit))
+        if before is None or before[3] == UNTOLD:
+            described[quantity.name, quantity.unit] = row
+    written = {(row[0], row[2]): row for row in rows(page) if row[3] != UNTOLD}
+    table = [written.get(key, described[key]) for key in sorted(described)]
+    head = page[: page.index("\n|---") + 1].splitlines()
+    lines = [*head, "|---|---|---|---|", *(f"| {' | '.join(row)} |" for row in table)]
+    return "\n".join(lines) + "\n"
+
+
+if __name__ == "__main__":
+    PAGE.write_text(brought_up_to_date(PAGE.read_text(encoding="utf-8"), quantities()), encoding="utf-8")
+    untold = [row[0] for row in rows(PAGE.read_text(encoding="utf-8")) if UNTOLD in row]
+    sys.stdout.write(f"{PAGE.name} written; without a meaning: {', '.join(untold) or 'none'}\n")

@@ -1,4 +1,4 @@
-"""Files of released versions and the results they gave. Write those of one: python -m tests.released 0.1.0."""
+"""Files of released versions and the results they gave, written by: python -m tests.released 0.1.0."""
 
 from __future__ import annotations
 

@@ -95,7 +95,9 @@ def kept_state(tree: ast.Module) -> Iterator[tuple[int, str]]:
         own |= set(names)
         if _is_container(getattr(statement, "value", None)):
             yield from (
-                (statement.lineno, f"{name} is no constant") for name in names if name not in {name.upper(), "__all__"}
+                (statement.lineno, f"{name} is no constant")
+                for name in names
+                if name not in {name.upper(), "__all__"}
             )
     for node in ast.walk(tree):
         if isinstance(node, ast.Global):

@@ -3,45 +3,53 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from pathlib import Path
 from types import ModuleType
 
 import pytest
 
-import loads
 from loads.arrays import FloatArray
-from tests.nomenclature import OF_ITS_KIND, of_module, quantities
+from tests.nomenclature import (
+    OF_ITS_KIND,
+    PAGE,
+    UNTOLD,
+    Quantity,
+    brought_up_to_date,
+    of_module,
+    quantities,
+    row_of,
+    rows,
+)
 
-PAGE = Path(loads.__file__).parent / "NOMENCLATURE.md"
-
-
-def rows() -> list[list[str]]:
-    """Cells of the table, without its head."""
-    lines = [line for line in PAGE.read_text(encoding="utf-8").splitlines() if line.startswith("| ")]
-    return [[cell.strip() for cell in line.strip("|").split("|")] for line in lines[1:]]
-
-
-def test_every_quantity_of_the_code_has_its_row() -> None:
-    written = {(name, unit) for name, _, unit, _ in rows()}
-    missing = {
-        (q.name, q.unit): f"| {q.name} | – | {q.unit} | {q.meaning or '?'} |   ({q.place})"
-        for q in quantities()
-        if (q.name, q.unit) not in written
-    }
-    assert not missing, "add to loads/NOMENCLATURE.md:\n" + "\n".join(missing[key] for key in sorted(missing))
+COMMAND = "python -m tests.nomenclature"
 
 
-def test_every_row_is_a_quantity_of_the_code() -> None:
-    known = {(q.name, q.unit) for q in quantities()}
-    gone = [(name, unit) for name, _, unit, _ in rows() if (name, unit) not in known]
-    assert not gone, f"no longer in the code, or with another unit: {gone}"
+def written() -> list[tuple[str, ...]]:
+    return rows(PAGE.read_text(encoding="utf-8"))
 
 
-def test_the_table_is_in_order_and_complete() -> None:
-    keys = [(name, unit) for name, _, unit, _ in rows()]
-    assert [name for name, _ in keys] == sorted(name for name, _ in keys)
-    assert len(set(keys)) == len(keys)
-    assert all(all(row) and len(row) == 4 for row in rows())
+def test_the_page_names_what_the_code_names() -> None:
+    code, page = {(q.name, q.unit): q for q in quantities()}, {(row[0], row[2]) for row in written()}
+    missing = ["| " + " | ".join(row_of(code[key])) + " |" for key in sorted(code.keys() - page)]
+    gone = [f"{name} [{unit}]" for name, unit in sorted(page - code.keys())]
+    assert not missing, f"missing from loads/NOMENCLATURE.md ({COMMAND}):\n" + "\n".join(missing)
+    assert not gone, f"no longer in the code, or with another unit ({COMMAND}): {', '.join(gone)}"
+
+
+def test_the_page_is_in_order_and_complete() -> None:
+    keys = [(row[0], row[2]) for row in written()]
+    assert keys == sorted(set(keys))
+    assert [row for row in written() if len(row) != 4 or not all(row) or UNTOLD in row] == []
+
+
+def test_a_page_brought_up_to_date_keeps_what_somebody_wrote() -> None:
+    page = PAGE.read_text(encoding="utf-8")
+    assert brought_up_to_date(page, quantities()) == page
+    new = Quantity("seepage", "m²/s", "flow per metre of width, shape (n,).", "loads.newcomer")
+    old = [q for q in quantities() if q.name != "bulge"]
+    changed = rows(brought_up_to_date(page, [*old, new]))
+    assert ("seepage", "–", "m²/s", "Flow per metre of width") in changed
+    assert not [row for row in changed if row[0] == "bulge"]
+    assert {row for row in written() if row[0] != "bulge"} < set(changed)
 
 
 @dataclass(frozen=True, kw_only=True)

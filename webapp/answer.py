@@ -3,14 +3,12 @@
 from __future__ import annotations
 
 import copy
-import math
 from collections.abc import Mapping
 from typing import Any
 
 from loads import __version__
-from loads.assessment import Assessed, Assessment, Barrier, Withheld, assess
+from loads.assessment import Assessed, AssessedClosure, Assessment, Barrier, Withheld, assess
 from loads.cautions import CAUTIONS
-from loads.checks import Check
 from loads.document import input_digest
 from loads.faces import Resultant
 from loads.records.base import read_date
@@ -18,6 +16,8 @@ from loads.scenario_file import Document, parse_document, scenario_of
 from loads.states import Levels
 from loads.units import SI_UNITS
 from loads.working import Step, Term, working
+from webapp.answer_closure import closure_answer
+from webapp.answer_parts import check_answer, first_limit_answer, number, part_answer
 
 SCHEMA = "sillhead/1"
 
@@ -94,13 +94,16 @@ def answer(assessment: Assessment, document: Mapping[str, object], index: int = 
 def _barrier(barrier: Barrier, index: int) -> dict[str, Any]:
     head = {
         "id": barrier.record.id,
-        "kind": "panel",
+        "kind": barrier.record.kind,
         "name": barrier.record.name,
         "verdict": barrier.verdict(index),
         "levels": _levels(barrier.setting.levels, index),
         "rated_level": _rated_level(barrier),
     }
-    return {**head, **(_results(barrier, index) if isinstance(barrier, Assessed) else _withheld(barrier))}
+    if not isinstance(barrier, Assessed):
+        return {**head, **_withheld(barrier)}
+    more = closure_answer(barrier, index) if isinstance(barrier, AssessedClosure) else {}
+    return {**head, **_results(barrier, index), **more}
 
 
 def _withheld(barrier: Withheld) -> dict[str, Any]:
@@ -109,6 +112,7 @@ def _withheld(barrier: Withheld) -> dict[str, Any]:
         "recheck": {
             "agrees": False,
             "largest_difference": barrier.difference,
+            "subject": barrier.subject,
             "first": {"horizontal": barrier.first[0], "moment": barrier.first[1]},
             "second": {"horizontal": barrier.second[0], "moment": barrier.second[1]},
         },
@@ -130,9 +134,9 @@ def _results(barrier: Assessed, index: int) -> dict[str, Any]:
             "agrees": bool(barrier.recheck.agrees[index]),
             "largest_difference": float(barrier.recheck.difference[index]),
         },
-        "parts": [],
-        "checks": [_check(check, index) for check in barrier.checks],
-        "first_limit": _first_limit(barrier),
+        "parts": [part_answer(part, index) for part in barrier.parts],
+        "checks": [check_answer(check, index) for check in barrier.checks],
+        "first_limit": first_limit_answer(barrier.first_limit),
         "working": [_step(step) for step in working(barrier, index)],
         "remarks": list(barrier.remarks),
     }
@@ -142,7 +146,7 @@ def _load(barrier: Assessed, index: int) -> dict[str, Any]:
     return {
         **_resultant(barrier.resultant, index),
         "about": {"x": 0.0, "z": barrier.face.bottom},
-        "line_of_action": _number(barrier.resultant.line_of_action[index]),
+        "line_of_action": number(barrier.resultant.line_of_action[index]),
         "by_load": {
             name: {"horizontal": float(part.horizontal[index]), "moment": float(part.moment[index])}
             for name, part in barrier.by_load.items()
@@ -151,7 +155,7 @@ def _load(barrier: Assessed, index: int) -> dict[str, Any]:
 
 
 def _levels(levels: Levels, index: int) -> dict[str, float | None]:
-    return {f"{side}_side": _number(levels.of(side)[index]) for side in ("flood", "protected")}
+    return {f"{side}_side": number(levels.of(side)[index]) for side in ("flood", "protected")}
 
 
 def _rated_level(barrier: Barrier) -> dict[str, Any] | None:
@@ -171,21 +175,6 @@ def _resultant(found: Resultant, index: int) -> dict[str, float]:
     }
 
 
-def _check(check: Check, index: int) -> dict[str, Any]:
-    kind = "length" if check.kind == "elevation" else check.kind
-    return {
-        "subject": check.subject,
-        "check": check.name,
-        "demand": float(check.demand[index]),
-        "limit": _number(check.limit_value),
-        "unit": SI_UNITS[kind],
-        "ratio": _number(check.ratio[index]),
-        "verdict": check.verdict(index),
-        "source": check.source,
-        "remarks": list(check.remarks),
-    }
-
-
 def _step(step: Step) -> dict[str, Any]:
     return {
         "title": step.title,
@@ -200,24 +189,6 @@ def _term(term: Term) -> dict[str, Any]:
     return {
         "symbol": term.symbol,
         "meaning": term.meaning,
-        "value": _number(term.value),
+        "value": number(term.value),
         "unit": SI_UNITS.get(kind, ""),
     }
-
-
-def _first_limit(barrier: Assessed) -> dict[str, Any] | None:
-    first = barrier.first_limit
-    if first is None:
-        return None
-    return {
-        "level": first.level,
-        "subject": first.subject,
-        "check": first.check,
-        "without_water": first.without_water,
-        "searched_to": first.ceiling,
-    }
-
-
-def _number(value: float) -> float | None:
-    number = float(value)
-    return number if math.isfinite(number) else None

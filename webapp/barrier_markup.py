@@ -5,25 +5,27 @@ from __future__ import annotations
 import math
 from collections.abc import Sequence
 
-from loads.assessment import Assessed, Withheld
-from webapp.display import PRINT_DIGITS, System, elevation, pedigree, show, show_all, significant
-from webapp.markup import escaped, head_on, table, verdict_mark
+from loads.assessment import Assessed, AssessedClosure, Withheld
+from webapp.closure_markup import stack_figure
+from webapp.display import PRINT_DIGITS, System, elevation, foot_of, pedigree, show, show_all
+from webapp.markup import escaped, head_on, ratio_words, table, verdict_mark
+from webapp.part_words import check_title, first_words
 from webapp.text_table import disagreement_text, first_limit_text
 
 
 def headline(barrier: Assessed, system: System) -> str:
     """Verdict, force, moment and where the force acts, in large figures."""
-    found = barrier.resultant
+    found, foot = barrier.resultant, foot_of(barrier.record.kind)
     action = float(found.line_of_action[0])
     arm = (
-        show(action - barrier.face.bottom, "length", system) + " above the bottom"
+        show(action - barrier.face.bottom, "length", system) + f" above the {foot}"
         if math.isfinite(action)
         else "–"
     )
     figures = [
         (verdict_mark(barrier.verdict()), _governing(barrier)),
         (show(float(found.horizontal[0]), "force", system), _direction(float(found.horizontal[0]))),
-        (show(float(found.moment[0]), "moment", system), "moment about the bottom"),
+        (show(float(found.moment[0]), "moment", system), f"moment about the {foot}"),
         (arm, "line of action"),
         (show(head_on(barrier), "length", system), "head, flood side"),
     ]
@@ -31,6 +33,8 @@ def headline(barrier: Assessed, system: System) -> str:
         way = "up" if found.vertical[0] > 0 else "down"
         figures.insert(2, (show(abs(float(found.vertical[0])), "force", system), f"vertical force, {way}"))
     cells = "".join(f"<div><b>{figure}</b><span>{words}</span></div>" for figure, words in figures)
+    if isinstance(barrier, AssessedClosure):
+        cells += stack_figure(barrier)
     return f'<div class="sh-big">{cells}</div>'
 
 
@@ -44,12 +48,12 @@ def _governing(barrier: Assessed) -> str:
     check = barrier.checks[0]
     if check.limit is None:
         return "no limit entered"
-    return f"{significant(float(check.ratio[0]), 3)} of limit, {check.name}"
+    return f"{ratio_words(check)}, {escaped(check_title(check, barrier.record.kind))}"
 
 
 def withheld_notice(barrier: Withheld) -> str:
     """Say that a barrier's results are withheld and why."""
-    words = escaped(disagreement_text(barrier.first, barrier.second))
+    words = escaped(disagreement_text(barrier.first, barrier.second, barrier.subject))
     return f"<p>{verdict_mark('withheld')}</p><p>{words}</p>"
 
 
@@ -64,7 +68,7 @@ def levels_note(barrier: Assessed, system: System) -> str:
     if first is None:
         computed = "First-limit level: none can be computed, no load limit was entered."
     else:
-        which = f" ({first.check}, {first.subject})" if first.level is not None else ""
+        which = f" ({first_words(first, barrier.record.kind)})" if first.level is not None else ""
         computed = (
             f"First-limit level: {first_limit_text(barrier, system)}{which}; computed, a screening figure, "
             "never in place of the rated level."
@@ -122,5 +126,10 @@ def load_table(barrier: Assessed, system: System) -> str:
         for name, kind in (("horizontal", "force"), ("vertical", "force"), ("moment", "moment"))
     ]
     rows = [list(row) for row in zip(names, *columns, strict=True)]
-    headings = ("cause", "horizontal force", "vertical force", "moment about the bottom")
+    headings = (
+        "cause",
+        "horizontal force",
+        "vertical force",
+        f"moment about the {foot_of(barrier.record.kind)}",
+    )
     return table(headings, rows, numeric={1, 2, 3}, total=True)

@@ -35,6 +35,8 @@ class Choice:
     from_size: float = math.inf
 
 
+PLAIN = ("ratio", "number")
+"""Kinds that have no unit."""
 _POWERS = {"area": (2, "²"), "first moment of area": (3, "³"), "second moment of area": (4, "⁴")}
 
 
@@ -58,9 +60,15 @@ CHOICES: dict[System, dict[str, Choice]] = {
         "temperature": _choice("temperature", "degF", "°F"),
         "density": _choice("density", "kg/m3", "kg/m³"),
         "speed": _choice("speed", "ft/s"),
-        "deflection": _choice("length", "in"),
         "stress": _choice("stress", "psi", larger="ksi", size=10_000.0),
+        "deflection": _choice("length", "in"),
         "section modulus": _choice("section modulus", "in3", "in³"),
+        "section second moment": _choice("second moment of area", "in4", "in⁴"),
+        "section area": _choice("area", "in2", "in²"),
+        "part length": _choice("length", "in"),
+        "part force": _choice("force", "lb"),
+        "part line load": _choice("line load", "lb/in"),
+        "part moment": _choice("moment", "lb·in"),
         "weight": _choice("weight", "lb", larger="kip", size=10_000.0),
         "duration": _choice("duration", "min", larger="h", size=120.0),
         "flow": _choice("flow", "gpm", "gal/min", larger="cfs", size=4_500.0),
@@ -79,9 +87,15 @@ CHOICES: dict[System, dict[str, Choice]] = {
         "temperature": _choice("temperature", "degC", "°C"),
         "density": _choice("density", "kg/m3", "kg/m³"),
         "speed": _choice("speed", "m/s"),
-        "deflection": _choice("length", "mm"),
         "stress": _choice("stress", "MPa"),
-        "section modulus": _choice("section modulus", "cm3", "cm³"),
+        "deflection": _choice("length", "mm"),
+        "section modulus": _choice("section modulus", "mm3", "mm³"),
+        "section second moment": _choice("second moment of area", "mm4", "mm⁴"),
+        "section area": _choice("area", "mm2", "mm²"),
+        "part length": _choice("length", "mm"),
+        "part force": _choice("force", "N"),
+        "part line load": _choice("line load", "N/mm"),
+        "part moment": _choice("moment", "N·mm"),
         "weight": _choice("weight", "kg"),
         "duration": _choice("duration", "min", larger="h", size=120.0),
         "flow": _choice("flow", "L/s"),
@@ -148,7 +162,7 @@ def show(value: float, kind: str, system: System, digits: int = PAGE_DIGITS) -> 
     >>> show(67948.9, "force", "US").replace(NO_BREAK, " ")
     '15.3 kip'
     """
-    if kind == "ratio":
+    if kind in PLAIN:
         return significant(value, digits)
     if kind == "elevation":
         return elevation(value, system)
@@ -230,6 +244,17 @@ def age_text(moment: datetime, now: datetime) -> str:
 def barrier_title(barrier_id: str, name: str) -> str:
     """Id and name of a barrier as headings show it."""
     return f"{barrier_id} · {name}" if name else barrier_id
+
+
+def foot_of(kind: str) -> str:
+    """What the bottom of a kind of barrier is called.
+
+    Examples
+    --------
+    >>> foot_of("closure"), foot_of("panel")
+    ('sill', 'bottom')
+    """
+    return "sill" if kind == "closure" else "bottom"
 
 
 def system_of(scenario: Scenario) -> System:

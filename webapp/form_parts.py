@@ -3,12 +3,15 @@
 from __future__ import annotations
 
 from collections.abc import Iterable, Mapping
+from itertools import groupby
 from typing import Any
 
 import streamlit as st
 
 from loads.problems import Problem
+from loads.records.basis import Basis
 from webapp import forms, state
+from webapp.closure_form import CLOSURE_FORM
 from webapp.markup import escaped
 
 _COLUMNS = 3
@@ -20,7 +23,7 @@ def draw_fields(
     """Draw fields of a record in rows and return what they hold now, ready for the document."""
     listed = list(names)
     changes: dict[str, object | None] = {}
-    plain = [name for name in listed if name not in forms.PEDIGREED or record == "sediment"]
+    plain = [name for name in listed if not forms.has_pedigree(record, forms.field_of(record, name))]
     for start in range(0, len(plain), _COLUMNS):
         for column, name in zip(st.columns(_COLUMNS), plain[start : start + _COLUMNS], strict=False):
             with column:
@@ -39,17 +42,18 @@ def _key(place: str, name: str, value: str) -> str:
 
 def _draw(record: str, name: str, table: Mapping[str, Any], place: str) -> object | None:
     field, before = forms.field_of(record, name), table.get(name)
-    key = _key(place, name, forms.shown(before))
-    if field.kind == "choice":
-        options = ["", *field.choices] if before is None or not table.get(name) else list(field.choices)
+    key = _key(place, name, forms.shown(before, field.kind))
+    if field.kind in ("choice", "flag"):
+        choices = ["yes", "no"] if field.kind == "flag" else list(field.choices)
+        options = ["", *choices]
         st.selectbox(field.label, options, key=key, help=field.meaning or None, persist_state="session")
-    elif field.kind in ("points", "holes"):
+    elif field.kind in ("points", "holes", "lines"):
         st.text_area(
             field.label,
             key=key,
             help=field.meaning,
-            placeholder=field.example,
-            height=150,
+            placeholder=field.example or None,
+            height=90 if field.kind == "lines" else 150,
             persist_state="session",
         )
     else:
@@ -93,66 +97,96 @@ def show_problems(problems: Iterable[Problem]) -> None:
         st.error(f"Nothing was changed; what you typed is still here.\n\n{words}")
 
 
-def panel_form(document: dict[str, Any], index: int, revision: int) -> None:
+def panel_form(document: dict[str, Any], place: state.Place, revision: int) -> None:
     """Form of one panel: shape, geometry, rated level and limits."""
-    panel = document["panel"][index]
-    place = f"{revision}.panel.{index}"
+    panel = state.record_at(document, place)
+    where = _where(revision, place)
     shapes = list(forms.SHAPE_FIELDS)
-    st.selectbox("Shape", shapes, key=_key(place, "shape", str(panel.get("shape", "rectangle"))))
-    shape = st.session_state[f"field {place}.shape"]
-    with st.form(f"panel {place}", border=True):
+    st.selectbox("Shape", shapes, key=_key(where, "shape", str(panel.get("shape", "rectangle"))))
+    shape = st.session_state[f"field {where}.shape"]
+    with st.form(f"panel {where}", border=True):
         changes = draw_fields(
-            "panel", ("id", "name", "bottom", *forms.SHAPE_FIELDS[shape], "note"), panel, place
+            "panel", ("id", "name", "bottom", *forms.SHAPE_FIELDS[shape], "note"), panel, where
         )
         st.markdown("**Rated level and limits that somebody set**")
-        changes |= draw_fields("panel", ("rated_level",), panel, place)
+        changes |= draw_fields("panel", ("rated_level",), panel, where)
         limits = draw_fields(
-            "limits", ("pressure", "force", "moment", "freeboard"), panel.get("limits", {}), place
+            "limits", ("pressure", "force", "moment", "freeboard"), panel.get("limits", {}), where
         )
         if st.form_submit_button("Take these values", type="primary"):
             kept = forms.without_other(panel, forms.SHAPE_FIELDS, shape)
-            changed = forms.merged(kept, {**changes, "shape": shape})
-            entered = forms.merged(panel.get("limits", {}), limits)
-            changed = forms.merged(changed, {"limits": entered or None})
-            if take(state.with_panel(document, index, changed)):
+            changed = forms.with_table({**kept, "shape": shape}, (), changes)
+            changed = forms.with_table(changed, ("limits",), limits)
+            if take(state.with_barrier(document, place, changed)):
                 st.rerun()
 
 
-def sediment_form(document: dict[str, Any], index: int, revision: int) -> None:
-    """Forms of the sediment layers of one panel, one layer each, and a button for another."""
-    layers = document["panel"][index].get("sediment", [])
+def closure_form(document: dict[str, Any], place: state.Place, revision: int) -> None:
+    """Form of one closure, section by section; the first stands open."""
+    record, where = state.record_at(document, place), _where(revision, place)
+    changed: dict[str, Any] = dict(record)
+    with st.form(f"closure {where}", border=True):
+        for section, parts in groupby(CLOSURE_FORM, key=lambda part: part.section):
+            box = st.expander(section) if section else st.container()
+            with box:
+                for part in parts:
+                    if part.title:
+                        st.markdown(f"**{part.title}**")
+                    table = forms.table_at(record, part.path)
+                    own = ".".join((where, *part.path))
+                    changes = draw_fields(part.record_name, part.asked, table, own)
+                    changed = forms.with_table(changed, part.path, changes)
+        if st.form_submit_button("Take these values", type="primary"):
+            if take(state.with_barrier(document, place, changed)):
+                st.rerun()
+
+
+BARRIER_FORMS = {"panel": panel_form, "closure": closure_form}
+"""Form of each kind of barrier."""
+
+
+def _where(revision: int, place: state.Place) -> str:
+    return f"{revision}.{place[0]}.{place[1]}"
+
+
+def sediment_form(document: dict[str, Any], place: state.Place, revision: int) -> None:
+    """Forms of the sediment layers of one barrier, one layer each, and a form for another."""
+    record = state.record_at(document, place)
+    layers = record.get("sediment", [])
+    where = f"{_where(revision, place)}.sediment"
     for number, layer in enumerate(layers):
-        with st.expander(
-            f"Sediment {number + 1}: {escaped(layer.get('name', ''))} {layer.get('side', '')} side"
-        ):
-            _layer_form(document, index, number, f"{revision}.panel.{index}.sediment.{number}")
-    fresh = {
-        "side": "flood",
-        "top": forms.shown(document["panel"][index]["bottom"]),
-        "pressure": "at rest",
-    }
+        title = f"Sediment {number + 1}: {escaped(layer.get('name', ''))} {layer.get('side', '')} side"
+        with st.expander(title):
+            _layer_form(document, place, number, f"{where}.{number}", layer, new=False)
+    foot = forms.shown(record.get("bottom") or record.get("sill"))
+    fresh = {"side": "flood", "top": foot, "pressure": "at rest"}
     with st.expander("Add a sediment layer"):
-        _layer_form(document, index, len(layers), f"{revision}.panel.{index}.sediment.new", fresh)
+        _layer_form(document, place, len(layers), f"{where}.new", fresh, new=True)
 
 
 def _layer_form(
-    document: dict[str, Any], index: int, number: int, place: str, fresh: dict[str, Any] | None = None
+    document: dict[str, Any],
+    place: state.Place,
+    number: int,
+    where: str,
+    layer: dict[str, Any],
+    *,
+    new: bool,
 ) -> None:
-    layer = fresh or document["panel"][index]["sediment"][number]
-    st.selectbox("Pressure", list(forms.PRESSURE_FIELDS), key=_key(place, "pressure", str(layer["pressure"])))
-    pressure = st.session_state[f"field {place}.pressure"]
-    with st.form(f"layer {place}", border=False):
+    st.selectbox("Pressure", list(forms.PRESSURE_FIELDS), key=_key(where, "pressure", str(layer["pressure"])))
+    pressure = st.session_state[f"field {where}.pressure"]
+    with st.form(f"layer {where}", border=False):
         names = ("name", "side", "top", *forms.PRESSURE_FIELDS[pressure])
-        changes = draw_fields("sediment", names, layer, place)
+        changes = draw_fields("sediment", names, layer, where)
         with st.container(horizontal=True):
             taken = st.form_submit_button("Take this layer", type="primary")
-            removed = fresh is None and st.form_submit_button("Remove this layer")
-        if removed and take(state.with_layer(document, index, number, None)):
+            removed = not new and st.form_submit_button("Remove this layer")
+        if removed and take(state.with_layer(document, place, number, None)):
             st.rerun()
         if taken:
             kept = forms.without_other(layer, forms.PRESSURE_FIELDS, pressure)
             changed = forms.merged(kept, {**changes, "pressure": pressure})
-            if take(state.with_layer(document, index, number, changed)):
+            if take(state.with_layer(document, place, number, changed)):
                 st.rerun()
 
 
@@ -167,8 +201,10 @@ def scenario_form(document: dict[str, Any], revision: int) -> None:
         described = draw_fields(
             "water", (*own, *(f"protected_{name}" for name in own)), water, f"{place}.water"
         )
+        st.markdown("**Design basis of every limit of a part**")
+        basis = draw_fields("basis", Basis.model_fields, document.get("basis", {}), f"{place}.basis")
         if st.form_submit_button("Take these values", type="primary"):
-            changed = forms.merged(document, changes)
-            changed["water"] = forms.merged(water, described)
+            changed = forms.with_table(forms.merged(document, changes), ("water",), described)
+            changed = forms.with_table(changed, ("basis",), basis)
             if take(changed):
                 st.rerun()

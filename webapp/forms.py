@@ -7,20 +7,25 @@ ranges. No Streamlit.
 from __future__ import annotations
 
 import copy
-from collections.abc import Iterable, Mapping
+from collections.abc import Callable, Iterable, Mapping
 from dataclasses import dataclass
 from datetime import date
 from typing import Any, Literal, get_args, get_origin
 
+from pydantic import AfterValidator
+
+from loads.closure.materials import MATERIALS
 from loads.quantity import Quantity
 from loads.records.base import Measure, Record
+from loads.records.basis import Basis
+from loads.records.member import LogLimits, PostLimits, known_material
 from loads.records.panel import Limits, Panel
+from loads.records.per_bay import WholeNumbers
 from loads.records.scenario import Scenario, Water
 from loads.records.sediment import Sediment
+from loads.scenario_file import BARRIER_KEYS
 from loads.units import EXAMPLES
-
-PEDIGREED = ("rated_level", "pressure", "force", "moment", "freeboard")
-"""Limits and rated level: their form asks for source and date too."""
+from webapp.closure_form import CLOSURE_FORM
 
 SHAPE_FIELDS: dict[str, tuple[str, ...]] = {
     "rectangle": ("width", "height", "tilt"),
@@ -63,11 +68,22 @@ PRESSURE_FIELDS: dict[str, tuple[str, ...]] = {
 
 RECORDS: dict[str, type[Record]] = {
     "scenario": Scenario,
+    "basis": Basis,
     "water": Water,
     "panel": Panel,
     "limits": Limits,
     "sediment": Sediment,
+    **{part.record_name: part.record for part in CLOSURE_FORM},
 }
+
+_LIMITS = (Limits, LogLimits, PostLimits)
+_PEDIGREED = {"rated_level", "allowance", "sill", "capacity", "limit", "pump_capacity"}
+
+
+def has_pedigree(record: str, field: Field) -> bool:
+    """Whether a form asks for source and date of a value too: of limits and of what decides."""
+    own = issubclass(RECORDS[record], _LIMITS) or field.name in _PEDIGREED
+    return own and field.kind == "quantity"
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -83,7 +99,8 @@ class Field:
     meaning
         What it is and its range.
     kind
-        "quantity", "number", "text", "choice", "outline" or "holes".
+        "quantity", "number", "whole", "whole numbers", "list", "lines", "text", "flag", "choice", "points" or
+        "holes".
     choices
         What may be chosen, for a choice.
     example
@@ -109,16 +126,34 @@ def field_of(record: str, name: str) -> Field:
         )
         return Field(name=name, label=label, meaning=words, kind=name, example="0 ft, 0 ft")
     parts = [info.annotation, *info.metadata, *_parts(info.annotation)]
+    kind, about = _kind(parts)
+    meaning = about.meaning if isinstance(about, (Measure, WholeNumbers)) else info.description or ""
+    example = (about.example or EXAMPLES[about.kind]) if isinstance(about, Measure) else ""
+    if kind == "list":
+        meaning, example = f"{meaning}; several, with commas between them", f"{example}, {example}"
+    elif kind == "lines":
+        meaning = "One to a line"
+    choices = tuple(about) if isinstance(about, tuple) else ()
+    return Field(name=name, label=label, meaning=meaning, kind=kind, choices=choices, example=example)
+
+
+def _kind(parts: list[Any]) -> tuple[str, Any]:
+    """Kind of a field, and the part of its definition that says more about it."""
+    whole = next((part for part in parts if isinstance(part, WholeNumbers)), None)
+    if whole is not None:
+        return "whole numbers", whole
+    measure = next((part for part in parts if isinstance(part, Measure)), None)
+    if any(get_origin(part) is tuple for part in parts):
+        return ("list", measure) if measure else ("lines", None)
+    if measure is not None:
+        return "quantity", measure
     for part in parts:
-        if isinstance(part, Measure):
-            example = part.example or EXAMPLES[part.kind]
-            return Field(name=name, label=label, meaning=part.meaning, kind="quantity", example=example)
         if get_origin(part) is Literal:
-            return Field(
-                name=name, label=label, meaning=info.description or "", kind="choice", choices=get_args(part)
-            )
-    kind = "number" if float in parts else "text"
-    return Field(name=name, label=label, meaning=info.description or "", kind=kind)
+            return "choice", get_args(part)
+        if isinstance(part, AfterValidator) and part.func is known_material:
+            return "choice", tuple(MATERIALS)
+    kinds = {bool: "flag", float: "number", int: "whole"}
+    return next((kind for type_, kind in kinds.items() if type_ in parts), "text"), None
 
 
 def _parts(annotation: Any) -> list[Any]:
@@ -128,14 +163,18 @@ def _parts(annotation: Any) -> list[Any]:
     return [part for part in found if part is not Quantity]
 
 
-def shown(value: object) -> str:
-    """Text of a document's value as it stands in a field."""
+def shown(value: object, kind: str = "") -> str:
+    """Text of a document's value as it stands in a field of a kind."""
     if value is None:
         return ""
+    if isinstance(value, bool):
+        return "yes" if value else "no"
     if isinstance(value, Mapping):
         return str(value.get("value", ""))
     if isinstance(value, (list, tuple)):
-        return _ring_text(value)
+        if value and isinstance(value[0], (list, tuple)):
+            return _ring_text(value)
+        return ("\n" if kind == "lines" else ", ").join(shown(item) for item in value)
     return str(value)
 
 
@@ -162,15 +201,10 @@ def typed_value(field: Field, typed: str, before: object) -> object | None:
     text = typed.strip()
     if not text:
         return None
-    if text == shown(before).strip():
+    if text == shown(before, field.kind).strip():
         return before
-    if field.kind == "number":
-        return _number(text)
-    if field.kind == "points":
-        return _corners(text)
-    if field.kind == "holes":
-        return [_corners(part) for part in text.split("\n\n") if part.strip()]
-    return text
+    read = _READERS.get(field.kind)
+    return read(text) if read else text
 
 
 def with_pedigree(value: object | None, source: str, day: str) -> object | None:
@@ -204,6 +238,27 @@ def _corners(text: str) -> list[list[str]]:
     return [[part.strip() for part in line.split(",")] for line in text.splitlines() if line.strip()]
 
 
+def _whole(text: str) -> int | str:
+    return int(text) if text.isdecimal() else text
+
+
+def _whole_numbers(text: str) -> int | str | list[int | str]:
+    parts = [_whole(part.strip()) for part in text.split(",")]
+    return parts[0] if len(parts) == 1 else parts
+
+
+_READERS: dict[str, Callable[[str], object]] = {
+    "number": _number,
+    "whole": _whole,
+    "whole numbers": _whole_numbers,
+    "flag": {"yes": True, "no": False}.__getitem__,
+    "list": lambda text: [part.strip() for part in text.split(",")],
+    "lines": lambda text: [line.strip() for line in text.splitlines() if line.strip()],
+    "points": _corners,
+    "holes": lambda text: [_corners(part) for part in text.split("\n\n") if part.strip()],
+}
+
+
 def merged(table: Mapping[str, Any], changes: Mapping[str, object | None]) -> dict[str, Any]:
     """Copy of a table of a document with changed values, empty ones taken out."""
     result = copy.deepcopy(dict(table))
@@ -224,11 +279,45 @@ def without_other(
     return {name: value for name, value in table.items() if name not in others}
 
 
+def table_at(record: Mapping[str, Any], path: tuple[str, ...]) -> dict[str, Any]:
+    """Table within a barrier's table, empty when it is not there."""
+    here: Any = record
+    for name in path:
+        here = here.get(name, {})
+    return dict(here)
+
+
+def with_table(
+    record: Mapping[str, Any], path: tuple[str, ...], changes: Mapping[str, object | None]
+) -> dict[str, Any]:
+    """Copy of a barrier's table with changes to a table within it; one that they leave empty goes."""
+    if not path:
+        return merged(record, changes)
+    before = record.get(path[0], {})
+    inner = with_table(before, path[1:], changes)
+    gone = not inner and (bool(before) or path[0] not in record)
+    return merged(record, {path[0]: None if gone else inner})
+
+
+def _free_id(document: Mapping[str, Any]) -> str:
+    taken = {record["id"] for kind in BARRIER_KEYS for record in document.get(kind, ())}
+    return next(f"N{n}" for n in range(1, len(taken) + 2) if f"N{n}" not in taken)
+
+
+def _last_foot(document: Mapping[str, Any]) -> str:
+    records = [record for kind in BARRIER_KEYS for record in document.get(kind, ())]
+    return shown(records[-1].get("bottom") or records[-1].get("sill"))
+
+
 def new_panel(document: Mapping[str, Any]) -> dict[str, Any]:
-    """Panel to begin with: an unused id, at the bottom of the last one, of plain size in the file's unit."""
-    panels = document["panel"]
-    taken = {panel["id"] for panel in panels}
-    number = next(n for n in range(1, len(panels) + 2) if f"N{n}" not in taken)
+    """Panel to begin with: an unused id, at the foot of the last barrier, of plain size in the file's unit."""
     size = ("10 ft", "5 ft") if document.get("units", "US") == "US" else ("3 m", "1.5 m")
-    bottom = shown(panels[-1]["bottom"])
-    return {"id": f"N{number}", "bottom": bottom, "shape": "rectangle", "width": size[0], "height": size[1]}
+    begun = {"id": _free_id(document), "bottom": _last_foot(document)}
+    return {**begun, "shape": "rectangle", "width": size[0], "height": size[1]}
+
+
+def new_closure(document: Mapping[str, Any]) -> dict[str, Any]:
+    """Closure to begin with: an unused id, at the foot of the last barrier, one bay of plain logs."""
+    size = ("8 ft", "9 in") if document.get("units", "US") == "US" else ("2.5 m", "200 mm")
+    begun = {"id": _free_id(document), "sill": _last_foot(document)}
+    return {**begun, "bays": 1, "bay_width": size[0], "log": {"height": size[1], "count": 8}}

@@ -21,6 +21,7 @@ from webapp.display import (
     show_all,
     significant,
 )
+from webapp.part_words import check_title
 from webapp.text_table import disagreement_text, first_limit_text
 
 VERDICT_CLASS: dict[Verdict, str] = {
@@ -137,9 +138,9 @@ def _figure(barrier: Barrier, kind: str) -> float:
 
 
 def _line_row(barrier: Barrier, system: System, force: str, moment: str) -> list[str]:
-    panel = barrier.record
-    name = escaped(barrier_title(panel.id, panel.name))
-    rated = elevation(panel.rated_level.value, system) if panel.rated_level else "none entered"
+    record = barrier.record
+    name = escaped(barrier_title(record.id, record.name))
+    rated = elevation(record.rated_level.value, system) if record.rated_level else "none entered"
     mark = verdict_mark(barrier.verdict())
     if not isinstance(barrier, Assessed):
         return [name, mark, "", "the two computations disagree", "", "", "", "", rated, ""]
@@ -148,8 +149,8 @@ def _line_row(barrier: Barrier, system: System, force: str, moment: str) -> list
     return [
         name,
         mark,
-        significant(float(check.ratio[0]), 3) if check.limit else "",
-        check.name if check.limit else "no limit entered",
+        ratio_cell(check, 0),
+        escaped(check_title(check, record.kind)) if check.limit else "no limit entered",
         show(head_on(barrier), "length", system),
         force,
         moment,
@@ -174,14 +175,14 @@ def line_cards(assessment: Assessment, system: System) -> str:
 
 
 def _card(barrier: Barrier, system: System) -> str:
-    panel = barrier.record
-    name = f"<b>{escaped(barrier_title(panel.id, panel.name))}</b>"
+    record = barrier.record
+    name = f"<b>{escaped(barrier_title(record.id, record.name))}</b>"
     mark = verdict_mark(barrier.verdict())
     if not isinstance(barrier, Assessed):
         return f'<div class="sh-card">{name}<span class="figure">withheld</span><span>{mark}</span></div>'
     check = barrier.checks[0]
     governs = (
-        f"{significant(float(check.ratio[0]), 3)} of limit, {check.name}"
+        f"{ratio_words(check)}, {escaped(check_title(check, record.kind))}"
         if check.limit
         else "no limit entered"
     )
@@ -194,6 +195,20 @@ def _card(barrier: Barrier, system: System) -> str:
     )
 
 
+def ratio_cell(check: Check, index: int) -> str:
+    """Ratio of a check in one state; empty without a limit."""
+    if check.limit is None:
+        return ""
+    ratio = float(check.ratio[index])
+    return significant(ratio, 3) if math.isfinite(ratio) else "none allowed"
+
+
+def ratio_words(check: Check) -> str:
+    """Ratio of a check in the first state, in words."""
+    cell = ratio_cell(check, 0)
+    return f"{cell} of limit" if cell[:1].isdigit() else cell
+
+
 def remark_list(barriers: Sequence[Barrier]) -> str:
     """Remarks of barriers, each under its id."""
     items = ""
@@ -203,36 +218,9 @@ def remark_list(barriers: Sequence[Barrier]) -> str:
                 f"<li><b>{escaped(barrier.record.id)}</b> {escaped(r)}</li>" for r in barrier.remarks
             )
         else:
-            words = escaped(disagreement_text(barrier.first, barrier.second))
+            words = escaped(disagreement_text(barrier.first, barrier.second, barrier.subject))
             items += f"<li><b>{escaped(barrier.record.id)}</b> {words}</li>"
     return f"<ul>{items}</ul>" if items else ""
-
-
-def check_table(checks: Sequence[Check], system: System) -> str:
-    """Checks of one barrier, the most pressing first."""
-    rows = [
-        [
-            check.name,
-            verdict_mark(check.verdict()),
-            show(float(check.demand[0]), check.kind, system),
-            _limit_cell(check, system),
-            significant(float(check.ratio[0]), 3) if check.limit else "",
-            escaped(" ".join((check.source, *check.remarks))),
-        ]
-        for check in checks
-    ]
-    return table(
-        ("check", "verdict", "demand", "limit as entered", "of limit", "source"), rows, numeric={2, 3, 4}
-    )
-
-
-def _limit_cell(check: Check, system: System) -> str:
-    if check.limit is None:
-        return "none entered"
-    words = escaped(check.limit.text)
-    if check.kind == "elevation" and abs(check.limit.value - check.limit_value) > 1e-9:
-        return f"{words}, level {elevation(check.limit_value, system)}"
-    return words
 
 
 def drawings(wide: str, narrow: str) -> str:

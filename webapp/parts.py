@@ -43,6 +43,15 @@ def heading(assessment: Assessment) -> None:
     st.markdown(block(title_block(assessment, digest, datetime.now(UTC))), unsafe_allow_html=True)
 
 
+def barrier_choice(document: Document) -> None:
+    """Choice of one barrier of the line."""
+    titles = state.barrier_titles(document)
+    state.keep_choice(st.session_state, "barrier", list(titles))
+    st.selectbox(
+        "Barrier", list(titles), key="barrier", format_func=titles.__getitem__, persist_state="session"
+    )
+
+
 def level_band() -> None:
     """Both levels with a step up and down, and the unit system."""
     with st.container(horizontal=True, vertical_alignment="bottom", gap="small", key="levels"):

@@ -15,9 +15,16 @@ from typing import Any
 from loads.problems import Problem, ScenarioError
 from loads.quantity import read_quantity
 from loads.records.scenario import Scenario
-from loads.scenario_file import Document, parse_document, read_file, scenario_of, write_document
+from loads.scenario_file import (
+    BARRIER_KEYS,
+    Document,
+    parse_document,
+    read_file,
+    scenario_of,
+    write_document,
+)
 from loads.units import from_si
-from webapp.display import System
+from webapp.display import System, barrier_title
 from webapp.links import LinkError, decode_document, encode_document
 from webapp.scenario_files import example_files
 
@@ -201,44 +208,82 @@ def take_text(session: Session, text: str) -> tuple[Problem, ...]:
     return replace_document(session, document)
 
 
-def with_panel(document: Document, index: int, panel: dict[str, Any]) -> Document:
-    """Copy of a document with one panel changed."""
+Place = tuple[str, int]
+"""Where a barrier stands in a document: its table, such as "closure", and its number there from 0."""
+
+
+def barrier_titles(document: Document) -> dict[str, str]:
+    """Id and title of every barrier, kind by kind, in the order of the file."""
+    return {
+        str(record["id"]): barrier_title(str(record["id"]), str(record.get("name", "")))
+        for kind in BARRIER_KEYS
+        for record in document.get(kind, ())
+    }
+
+
+def place_of(document: Document, barrier_id: str) -> Place:
+    """Place of the barrier with an id.
+
+    Raises
+    ------
+    KeyError
+        There is none.
+    """
+    for kind in BARRIER_KEYS:
+        for number, record in enumerate(document.get(kind, ())):
+            if str(record["id"]) == barrier_id:
+                return kind, number
+    raise KeyError(barrier_id)
+
+
+def record_at(document: Document, place: Place) -> dict[str, Any]:
+    """Table of the barrier at a place."""
+    record: dict[str, Any] = document[place[0]][place[1]]
+    return record
+
+
+def with_barrier(document: Document, place: Place, record: dict[str, Any]) -> Document:
+    """Copy of a document with one barrier changed."""
     changed = copy.deepcopy(document)
-    changed["panel"][index] = panel
+    changed[place[0]][place[1]] = record
     return changed
 
 
-def with_layer(document: Document, index: int, number: int, layer: dict[str, Any] | None) -> Document:
-    """Copy of a document with one sediment layer of a panel changed, added at the end, or taken out."""
+def with_layer(document: Document, place: Place, number: int, layer: dict[str, Any] | None) -> Document:
+    """Copy of a document with one sediment layer of a barrier changed, added at the end, or taken out."""
     changed = copy.deepcopy(document)
-    panel = changed["panel"][index]
-    layers = list(panel.get("sediment", []))
+    record = record_at(changed, place)
+    layers = list(record.get("sediment", []))
     layers[number : number + 1] = [] if layer is None else [layer]
-    panel.pop("sediment", None)
+    record.pop("sediment", None)
     if layers:
-        panel["sediment"] = layers
+        record["sediment"] = layers
     return changed
 
 
-def add_panel(session: Session, panel: dict[str, Any]) -> None:
-    """Add a panel at the end and choose it."""
+def add_barrier(session: Session, kind: str, record: dict[str, Any]) -> None:
+    """Add a barrier of a kind at the end and choose it."""
     changed = copy.deepcopy(session["document"])
-    changed["panel"].append(panel)
+    changed.setdefault(kind, []).append(record)
     if not replace_document(session, changed):
-        session["barrier"] = panel["id"]
+        session["barrier"] = record["id"]
 
 
-def copy_panel(session: Session, index: int) -> None:
-    """Add a copy of a panel under an id that is free, and choose it."""
-    panels = session["document"]["panel"]
-    taken = {panel["id"] for panel in panels}
-    stem = str(panels[index]["id"])[:18]
-    free = next(f"{stem}-{n}" for n in range(2, len(panels) + 3) if f"{stem}-{n}" not in taken)
-    add_panel(session, {**copy.deepcopy(panels[index]), "id": free})
+def copy_barrier(session: Session, place: Place) -> None:
+    """Add a copy of a barrier under an id that is free, and choose it."""
+    document = session["document"]
+    taken = set(barrier_titles(document))
+    record = record_at(document, place)
+    stem = str(record["id"])[:18]
+    free = next(f"{stem}-{n}" for n in range(2, len(taken) + 3) if f"{stem}-{n}" not in taken)
+    add_barrier(session, place[0], {**copy.deepcopy(record), "id": free})
 
 
-def remove_panel(session: Session, index: int) -> None:
-    """Take a panel out."""
+def remove_barrier(session: Session, place: Place) -> None:
+    """Take a barrier out."""
     changed = copy.deepcopy(session["document"])
-    del changed["panel"][index]
+    kind, number = place
+    del changed[kind][number]
+    if not changed[kind]:
+        del changed[kind]
     replace_document(session, changed)

@@ -10,6 +10,7 @@ from webapp.display import (
     CHOICES,
     MINUS,
     NO_BREAK,
+    PLAIN,
     PRINT_DIGITS,
     System,
     fixed,
@@ -34,7 +35,7 @@ def unit_of(kind: str, system: System) -> str:
     >>> unit_of("area", "US"), unit_of("moment", "SI"), unit_of("ratio", "US")
     ('ft²', 'kN·m', '')
     """
-    if kind in ("ratio", "text"):
+    if kind in (*PLAIN, "text"):
         return ""
     if kind in POWERS:
         return unit_label("length", system) + POWERS[kind][1]
@@ -43,7 +44,7 @@ def unit_of(kind: str, system: System) -> str:
 
 def in_working_unit(value: float, kind: str, system: System) -> float:
     """Value in the unit of `unit_of`."""
-    if kind == "ratio":
+    if kind in PLAIN:
         return value
     if kind in POWERS:
         return value / from_si_factor(CHOICES[system]["length"]) ** POWERS[kind][0]

@@ -27,8 +27,8 @@ _HEADINGS = (
 )
 _RIGHT = frozenset({3, 5, 6, 7, 8, 9, 10})
 _LEGEND = (
-    "force: horizontal, positive toward the protected side; moment: about the bottom edge; first limit: "
-    "computed, a screening figure"
+    "force: horizontal, positive toward the protected side; moment: about the bottom edge or the sill; first "
+    "limit: computed, a screening figure"
 )
 
 
@@ -58,6 +58,7 @@ def _row(barrier: Barrier, system: System) -> tuple[str, ...]:
     if not isinstance(barrier, Assessed):
         return (panel.id, panel.name, "withheld", "", "", "", "", "", "", rated, "")
     worst = barrier.checks[0]
+    part = "" if worst.subject.startswith(panel.kind) else f"{worst.subject}, "
     checked = worst.limit is not None
     action = float(barrier.resultant.line_of_action[0])
     head = max(float(barrier.levels.flood_side[0]) - barrier.face.bottom, 0.0)
@@ -66,7 +67,7 @@ def _row(barrier: Barrier, system: System) -> tuple[str, ...]:
         panel.name,
         barrier.verdict(),
         significant(float(worst.ratio[0]), 3) if checked else "",
-        worst.name if checked else "no limit entered",
+        f"{part}{worst.name}" if checked else "no limit entered",
         show(head, "length", system),
         show(float(barrier.resultant.horizontal[0]), "force", system),
         show(float(barrier.resultant.moment[0]), "moment", system),
@@ -94,15 +95,18 @@ def _remarks(barriers: Sequence[Barrier]) -> list[str]:
         if isinstance(barrier, Assessed):
             lines += [f"{barrier.record.id}: {remark}" for remark in barrier.remarks]
         else:
-            lines.append(f"{barrier.record.id}: {disagreement_text(barrier.first, barrier.second)}")
+            lines.append(
+                f"{barrier.record.id}: {disagreement_text(barrier.first, barrier.second, barrier.subject)}"
+            )
     return [*lines, ""] if lines else []
 
 
-def disagreement_text(first: tuple[float, float], second: tuple[float, float]) -> str:
-    """Sentence about two computations that disagree."""
+def disagreement_text(first: tuple[float, float], second: tuple[float, float], subject: str = "") -> str:
+    """Sentence about two computations that disagree; `subject` is the part whose figures they are."""
+    about = f" about {subject}" if subject else ""
     return (
-        f"withheld: the two computations disagree (force {first[0]:.9g} against {second[0]:.9g} N, moment "
-        f"{first[1]:.9g} against {second[1]:.9g} N·m). Do not use this barrier's figures; report it."
+        f"withheld: the two computations disagree{about} (force {first[0]:.9g} against {second[0]:.9g} N, "
+        f"moment {first[1]:.9g} against {second[1]:.9g} N·m). Do not use this barrier's figures; report it."
     )
 
 

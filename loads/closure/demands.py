@@ -87,7 +87,8 @@ def upright_load(diagram: Diagram, pieces: Pieces, sill: float) -> Diagram:
     """Load along a post or guide, elevations counted from the sill. [N/m]."""
     if not pieces:
         return Diagram.of_terms(diagram.states, ())
-    return Diagram.joined(diagram.below(top).scaled(width) for top, width in pieces).raised(-sill)
+    acting = diagram.shortened()
+    return Diagram.joined(acting.below(top).scaled(width) for top, width in pieces).raised(-sill)
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -113,13 +114,13 @@ class Demands:
     posts: PostForces
     anchors: AnchorForces
 
-    @property
+    @cached_property
     def log_names(self) -> tuple[str, ...]:
         """Name of each column of logs."""
         names = self.structure.layout.log_names
         return tuple(names[column] for column in self.log_columns)
 
-    @property
+    @cached_property
     def post_names(self) -> tuple[str, ...]:
         """Name of each column of posts."""
         return tuple(self.structure.layout.posts[column].name for column in self.post_columns)
@@ -187,7 +188,9 @@ def _post(
     anchor = structure.closure.anchor
     if anchor is None:
         missing = np.full(diagram.states, np.nan)
-        none = AnchorForces(tension=missing, bolt_tension=missing, bolt_shear=missing, contact_pressure=missing)
+        none = AnchorForces(
+            tension=missing, bolt_tension=missing, bolt_shear=missing, contact_pressure=missing
+        )
         return found, none
     held = anchor_forces(
         anchor,

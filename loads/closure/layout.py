@@ -105,7 +105,7 @@ class Layout:
     @cached_property
     def edges(self) -> FloatArray:
         """Elevations of the joints from the sill up, shape (rows + 1,). [m]."""
-        return self.sill + self.log_height * np.arange(self.rows + 1)
+        return self.sill + self.log_height * np.arange(self.rows + 1, dtype=float)
 
     @cached_property
     def bay_of(self) -> Indices:

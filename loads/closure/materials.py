@@ -7,6 +7,7 @@ document that it names; checks against it say so.
 from __future__ import annotations
 
 from dataclasses import dataclass
+from functools import cache
 from typing import Literal, TypeAlias
 
 from loads.quantity import Quantity, read_quantity
@@ -38,13 +39,18 @@ class MaterialFigure:
 
     def limit(self) -> Quantity:
         """The figure as a limit, with its document as the source."""
-        value, unit = read_quantity(self.text, "stress")
-        source = f"{self.source}, {self.edition}"
-        if self.standing != "published":
-            source += f" ({self.standing})"
-        return Quantity(
-            text=self.text, kind="stress", unit=unit, value=value, low=value, high=value, source=source
-        )
+        return _limit(self)
+
+
+@cache
+def _limit(figure: MaterialFigure) -> Quantity:
+    value, unit = read_quantity(figure.text, "stress")
+    source = f"{figure.source}, {figure.edition}"
+    if figure.standing != "published":
+        source += f" ({figure.standing})"
+    return Quantity(
+        text=figure.text, kind="stress", unit=unit, value=value, low=value, high=value, source=source
+    )
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -77,9 +83,7 @@ class Material:
 
 
 def _recalled(text: str, source: str, edition: str) -> MaterialFigure:
-    return MaterialFigure(
-        text=text, source=source, edition=edition, standing="from memory, to be confirmed"
-    )
+    return MaterialFigure(text=text, source=source, edition=edition, standing="from memory, to be confirmed")
 
 
 def _seen(text: str, source: str, edition: str) -> MaterialFigure:
@@ -90,10 +94,12 @@ _ADM, _ADM_EDITION = "Aluminum Design Manual", "2010 to 2020"
 _AISC, _AISC_EDITION = "AISC Specification, allowable strength design", "2005 and later"
 _NDS, _NDS_EDITION = "NDS Supplement, tables 4A and 4D", "2005 to 2018"
 _EN = "EN 1993-1-1"
-_HYDRAULIC = "For hydraulic structures five sixths of such figures are common practice; lower the limit by hand."
+_HYDRAULIC = (
+    "For hydraulic structures five sixths of such figures are common practice; lower the limit by hand."
+)
 _TIMBER = (
-    "Wet service is counted, at its full reduction for every grade. Size, duration, temperature and incising are "
-    "not: factors 1. The modulus is the mean."
+    "Wet service is counted, at its full reduction for every grade. Size, duration, temperature and incising "
+    "are not: factors 1. The modulus is the mean."
 )
 _LUMBER, _BEAMS = (0.85, 0.97, 0.67, 0.9), (1.0, 1.0, 0.67, 1.0)
 
@@ -124,12 +130,12 @@ def _wet(dry: float, factor: float, unit: str, what: str) -> MaterialFigure:
     return _recalled(f"{dry * factor:.6g} {unit}", source, _NDS_EDITION)
 
 
-def _timber(name: str, dry: tuple[float, float, float, float], wet: tuple[float, float, float, float]) -> Material:
+def _timber(
+    name: str, dry: tuple[float, float, float, float], wet: tuple[float, float, float, float]
+) -> Material:
     """Bending, shear and bearing stress in psi and modulus in ksi, each with its wet-service factor."""
     words = ("bending", "shear", "bearing across the grain")
-    allowable = {
-        word.split(" ", 1)[0]: _wet(dry[i], wet[i], "psi", word) for i, word in enumerate(words)
-    }
+    allowable = {word.split(" ", 1)[0]: _wet(dry[i], wet[i], "psi", word) for i, word in enumerate(words)}
     modulus = _wet(dry[3], wet[3], "ksi", "modulus")
     return Material(name=name, modulus=modulus, allowable=allowable, nominal={}, note=_TIMBER)
 
@@ -149,7 +155,8 @@ _LISTED = (
         "aluminium 6061-T6",
         _recalled("19.5 ksi", f"{_ADM}, tensile strength 38 ksi over 1.95", _ADM_EDITION),
         _seen("35 ksi", "49 CFR 178.46 table 2, least yield strength", "as stored"),
-        "Not within 1 in of a weld. Editions differ from 19.5 to 27.6 ksi for compact shapes; the least is taken.",
+        "Not within 1 in of a weld. Editions differ from 19.5 to 27.6 ksi for compact shapes; the least is "
+        "taken.",
     ),
     _aluminium(
         "aluminium 6061-T6, welded",

@@ -6,13 +6,14 @@ lowest and the highest of those that apply are given, never one figure alone.
 
 from __future__ import annotations
 
+from collections.abc import Callable
 from dataclasses import dataclass
 from typing import Final
 
 import numpy as np
 
 from loads.arrays import BoolArray, FloatArray
-from loads.closure.crest_formulas import SHARP_CREST_FORMULAS
+from loads.closure.crest_formulas import SHARP_CREST_FORMULAS, SharpCrestFormula
 from loads.closure.weirs import drowning_factor, flow_broad_crest, flow_sharp_crest
 from loads.limits_of_use import LimitOfUse, outside, refuse_unless
 
@@ -142,7 +143,8 @@ def overflow(openings: Openings, flood_side: FloatArray, protected_side: FloatAr
     -----
     Water above a crest on the protected side drowns a sharp crest by [Villemonte1947], from memory, to be
     confirmed. Outside its heads a formula only bounds the range: past the last of them the highest flow is
-    not below what it gave there, before the first the least flow not above. So more head never gives less.
+    not below what it gives there, before the first the least flow not above. So more head never gives less,
+    and water behind never more.
     The level is taken as measured ahead of the crest in an approach as wide as the opening: where it was
     taken in water at rest, formulas with h/P lie on the high side.
 
@@ -155,39 +157,58 @@ def overflow(openings: Openings, flood_side: FloatArray, protected_side: FloatAr
     ([[0.0], [0.457]], [[0.0], [0.495]])
     """
     _refuse_impossible(openings)
-    crest, width, thickness = openings.crest, openings.width, openings.crest_thickness
-    head = np.maximum(flood_side[:, None] - crest, 0.0)
-    tail = np.maximum(protected_side[:, None] - crest, 0.0)
-    crest_height = crest - openings.ground
-    unknown = np.isnan(thickness)
-    sharp = (unknown | (head >= _SHARP_FROM * thickness)) & (head > 0)
-    broad = (unknown | ~outside(head / thickness, SPRINGS_CLEAR)) & (head > 0)
-    left = drowning_factor(head, tail)
-    least, greatest, applies = [], [], []
-    for formula in SHARP_CREST_FORMULAS:
-        last = formula.greatest_head(crest_height, width)
-        fits, first = sharp & (last > 0), formula.head.low
-        height = np.where(last > 0, crest_height, 1.0)
-        from_first = formula.flow(np.maximum(head, first), height, width) * left
-        to_last = formula.flow(np.minimum(head, last), height, width) * left
-        least.append(np.where(fits & (head <= last), from_first, np.inf))
-        greatest.append(np.where(fits & (head >= first), to_last, 0.0))
-        applies.append(fits & (head >= first) & (head <= last))
-    for used, flow in (
-        (sharp, flow_sharp_crest(head, width) * left),
-        (broad, flow_broad_crest(head, tail, width)),
-    ):
-        least.append(np.where(used, flow, np.inf))
-        greatest.append(np.where(used, flow, 0.0))
-        applies.append(used)
-    low = np.min(least, axis=0)
+    head = np.maximum(flood_side[:, None] - openings.crest, 0.0)
+    tail = np.maximum(protected_side[:, None] - openings.crest, 0.0)
+    low, high, applies = [], [], []
+    for formula in _formulas_at(openings):
+        first, last, exists = formula.first, formula.last, formula.last >= formula.first
+        begun, ended = exists & (head >= first), head > last
+        low.append(np.where(exists & ~ended, formula.flow(np.maximum(head, first), tail), np.inf))
+        high.append(np.where(begun, formula.flow(np.minimum(head, last), tail), 0.0))
+        applies.append(begun & ~ended & (head > 0))
     return Overflow(
-        level=float(crest.min()),
+        level=float(openings.crest.min()),
         head=head,
-        low=np.where(head > 0, low, 0.0),
-        high=np.max(greatest, axis=0),
+        low=np.min(low, axis=0),
+        high=np.max(high, axis=0),
         applies=np.stack(applies, axis=-1),
     )
+
+
+@dataclass(frozen=True, kw_only=True)
+class _FormulaHere:
+    """A formula at the k crests: flow from both heads, and the heads from and to which it applies, (k,)."""
+
+    flow: Callable[[FloatArray, FloatArray], FloatArray]
+    first: FloatArray
+    last: FloatArray
+
+
+def _formulas_at(openings: Openings) -> list[_FormulaHere]:
+    """Every formula of `FORMULAS` at the crests, in that order."""
+    width, thickness = openings.width, openings.crest_thickness
+    crest_height = openings.crest - openings.ground
+    sharp_from = np.where(np.isnan(thickness), 0.0, _SHARP_FROM * thickness)
+    broad_to = np.where(np.isnan(thickness), np.inf, SPRINGS_CLEAR.high * thickness)
+
+    def of_sharp(formula: SharpCrestFormula) -> _FormulaHere:
+        last = formula.greatest_head(crest_height, width)
+        height = np.where(last > 0, crest_height, 1.0)
+        return _FormulaHere(
+            flow=lambda h, tail: formula.flow(h, height, width) * drowning_factor(h, tail),
+            first=np.maximum(sharp_from, formula.head.low),
+            last=last,
+        )
+
+    sharp = _FormulaHere(
+        flow=lambda h, tail: flow_sharp_crest(h, width) * drowning_factor(h, tail),
+        first=sharp_from,
+        last=np.full_like(width, np.inf),
+    )
+    broad = _FormulaHere(
+        flow=lambda h, tail: flow_broad_crest(h, tail, width), first=np.zeros_like(width), last=broad_to
+    )
+    return [*(of_sharp(formula) for formula in SHARP_CREST_FORMULAS), sharp, broad]
 
 
 def _refuse_impossible(openings: Openings) -> None:

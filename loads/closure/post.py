@@ -13,6 +13,7 @@ from dataclasses import dataclass
 from typing import Literal
 
 import numpy as np
+from numpy.typing import NDArray
 
 from loads.arrays import FloatArray
 from loads.diagram import Diagram
@@ -20,7 +21,7 @@ from loads.diagram import Diagram
 Fixity = Literal["fixed", "pinned"]
 
 _GRID = 24
-_STEPS = 5
+_STEPS = 3
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -96,6 +97,7 @@ class _Bent:
     push: FloatArray
     turn: FloatArray
     stiffness: float
+    foot: tuple[FloatArray, FloatArray]
 
     def shear(self, x: FloatArray) -> FloatArray:
         """Just above x."""
@@ -107,27 +109,28 @@ class _Bent:
         return found if self.prop is None else found - self.push * np.maximum(self.prop.height - x, 0.0)
 
     def slope(self, x: FloatArray) -> FloatArray:
-        bent = self.load.moment_integral(np.zeros(1)) - self.load.moment_integral(x)
+        bent = self.foot[0] - self.load.moment_integral(x)
         if self.prop is not None:
             h = self.prop.height
             bent = bent - self.push * (h**2 - np.maximum(h - x, 0.0) ** 2) / 2
         return self.turn + bent / self.stiffness
 
     def deflection(self, x: FloatArray) -> FloatArray:
-        bent = _free_deflection(self.load, x)
+        bent = _free_deflection(self.load, x, self.foot)
         if self.prop is not None:
             bent = bent - self.push * _prop_kernel(x, self.prop.height)
         return self.turn * x + bent / self.stiffness
 
 
-def _free_deflection(load: Diagram, x: FloatArray) -> FloatArray:
-    """EI times the deflection of a cantilever, x N(0) − Q(0) + Q(x)."""
+def _at_foot(load: Diagram) -> tuple[FloatArray, FloatArray]:
+    """N(0) and Q(0), each (n, 1)."""
     foot = np.zeros(1)
-    return np.asarray(
-        x * load.moment_integral(foot)
-        - load.moment_second_integral(foot)
-        + load.moment_second_integral(x)
-    )
+    return load.moment_integral(foot), load.moment_second_integral(foot)
+
+
+def _free_deflection(load: Diagram, x: FloatArray, foot: tuple[FloatArray, FloatArray]) -> FloatArray:
+    """EI times the deflection of a cantilever, x N(0) − Q(0) + Q(x)."""
+    return np.asarray(x * foot[0] - foot[1] + load.moment_second_integral(x))
 
 
 def _prop_kernel(x: FloatArray, height: float) -> FloatArray:
@@ -163,7 +166,7 @@ def prop_force(load: Diagram, prop: Prop) -> FloatArray:
     """
     if prop.fixity == "pinned":
         return load.moment(np.zeros(1)) / prop.height
-    return _free_deflection(load, np.array([[prop.height]])) / (prop.height**3 / 3)
+    return _free_deflection(load, np.array([[prop.height]]), _at_foot(load)) / (prop.height**3 / 3)
 
 
 def post_forces(load: Diagram, *, height: float, stiffness: float, prop: Prop | None) -> PostForces:
@@ -192,9 +195,10 @@ def post_forces(load: Diagram, *, height: float, stiffness: float, prop: Prop | 
     push = np.zeros((load.states, 1)) if prop is None else prop_force(load, prop)
     turn = np.zeros((load.states, 1))
     if prop is not None and prop.fixity == "pinned":
-        free = _free_deflection(load, np.array([[prop.height]])) - push * prop.height**3 / 3
+        at_brace = _free_deflection(load, np.array([[prop.height]]), _at_foot(load))
+        free = at_brace - push * prop.height**3 / 3
         turn = -free / (stiffness * prop.height)
-    bent = _Bent(load, prop, push, turn, stiffness)
+    bent = _Bent(load, prop, push, turn, stiffness, _at_foot(load))
     foot, top = np.zeros((1, 1)), np.full((1, 1), height)
     moment, moment_height, shear = _extremes(bent, height)
     sag, sag_height = _greatest_deflection(bent, height)
@@ -217,7 +221,7 @@ def post_forces(load: Diagram, *, height: float, stiffness: float, prop: Prop | 
     )
 
 
-def _greatest(value: FloatArray) -> tuple[FloatArray, FloatArray]:
+def _greatest(value: FloatArray) -> tuple[FloatArray, NDArray[np.intp]]:
     """Entry of greatest magnitude of each row, and its column."""
     column = np.argmax(np.abs(value), axis=1)
     return np.take_along_axis(value, column[:, None], axis=1)[:, 0], column
@@ -254,7 +258,7 @@ def _extremes(bent: _Bent, height: float) -> tuple[FloatArray, FloatArray, Float
 
 
 def _greatest_deflection(bent: _Bent, height: float) -> tuple[FloatArray, FloatArray]:
-    """Greatest deflection and its height: the best of a grid, then Newton's steps to where the slope is nil."""
+    """Greatest deflection and its height: best of a grid, then Newton's steps to where the slope is nil."""
     states = bent.load.states
     if not np.isfinite(bent.stiffness):
         return np.full(states, np.nan), np.full(states, np.nan)

@@ -231,5 +231,5 @@ def drowning_factor(head: FloatArray, tail_head: FloatArray) -> FloatArray:
     array([[1.   , 0.845]])
     """
     h, tail = np.maximum(head, 0.0), np.maximum(tail_head, 0.0)
-    drowned = np.where(h > 0, np.minimum(tail / np.where(h > 0, h, 1.0), 1.0), tail > 0)
+    drowned = np.where(h > 0, np.minimum(tail, h) / np.where(h > 0, h, 1.0), tail > 0)
     return np.asarray((1 - drowned**1.5) ** 0.385, dtype=np.float64)

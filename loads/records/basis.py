@@ -1,4 +1,4 @@
-"""The design basis of a scenario: how limits of parts are held against demands, chosen once for all of them."""
+"""The design basis of a scenario: how limits of parts are held against demands, chosen once."""
 
 from __future__ import annotations
 
@@ -12,7 +12,7 @@ Factor = Annotated[float, Field(gt=0, le=10, allow_inf_nan=False)]
 
 
 class Basis(Record):
-    """Working stresses with a factor for the case's category, or strengths with load and resistance factors."""
+    """Working stresses with a factor for the category, or strengths with load and resistance factors."""
 
     method: Literal["working stress", "strength"] = "working stress"
     category: Literal["usual", "unusual", "extreme"] = "usual"

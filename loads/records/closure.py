@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from typing import Annotated, ClassVar
+from typing import Annotated, Any, ClassVar
 
 from pydantic import Field, field_validator, model_validator
 
@@ -40,8 +40,12 @@ class Closure(Record):
     ) = None
     height: Annotated[Quantity, small_size("Height of the opening above the sill", "7 ft")] | None = None
     logs_in_place: (
-        Annotated[Whole, WholeNumbers(meaning="Logs in place in each bay; all that are on hand if left out",
-                                      least=0, most=200)]
+        Annotated[
+            Whole,
+            WholeNumbers(
+                meaning="Logs in place in each bay; all that are on hand if left out", least=0, most=200
+            ),
+        ]
         | None
     ) = None
     log: Log
@@ -84,7 +88,8 @@ class Closure(Record):
             problems = self._count_problems() + self._height_problems()
         if self.anchor is not None and self.post is None:
             problems.append(("post", "", "is missing; anchors hold a post"))
-        footed = Panel.model_construct(bottom=self.sill, sediment=self.sediment)
+        ground: dict[str, Any] = {"bottom": self.sill, "sediment": self.sediment}
+        footed = Panel.model_construct(**ground)
         problems += footed.sediment_problems("sill of the closure")
         if problems:
             raise several_problems(problems)

@@ -127,7 +127,8 @@ class Anchor(Record):
     bolt_distances: (
         Annotated[
             tuple[
-                Annotated[Quantity, small_size("Distance of a bolt from the edge in compression", "8 in")], ...
+                Annotated[Quantity, small_size("Distance of a bolt from the edge in compression", "8 in")],
+                ...,
             ],
             Field(min_length=1, max_length=50, strict=False),
         ]

@@ -55,9 +55,9 @@ class Seal(Record):
         default=None,
         description="Power of the head by which the leakage grows, 0.5 for an opening, 1 for a slow seep",
     )
-    gap_width: (
-        Annotated[Quantity, small_size("Open gap along the height of each guide", "0.1 in")] | None
-    ) = None
+    gap_width: Annotated[Quantity, small_size("Open gap along the height of each guide", "0.1 in")] | None = (
+        None
+    )
     pump_capacity: (
         Annotated[Quantity, Measure(kind="flow", meaning="Pump behind the closure", above="0 gpm")] | None
     ) = None
@@ -112,9 +112,7 @@ class Niosh(Record):
     horizontal: Annotated[Quantity, small_size("Hands in front of the ankles", "12 in")]
     vertical: Annotated[
         Quantity,
-        Measure(
-            kind="length", meaning="Hands above the floor", least="0 ft", most="10 ft", example="30 in"
-        ),
+        Measure(kind="length", meaning="Hands above the floor", least="0 ft", most="10 ft", example="30 in"),
     ]
     travel: Annotated[
         Quantity,

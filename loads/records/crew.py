@@ -3,13 +3,23 @@
 from __future__ import annotations
 
 import datetime as dt
+from collections import Counter
+from collections.abc import Mapping, Sequence
 from typing import Annotated, Literal
 
 from pydantic import BeforeValidator, Field, model_validator
 
 from loads.quantity import Quantity
-from loads.records.base import Measure, Name, Note, Record, problem_error, read_date, several_problems
-from loads.records.gauge import Id
+from loads.records.base import (
+    Measure,
+    Name,
+    Note,
+    Record,
+    problem_error,
+    read_date,
+    several_problems,
+)
+from loads.records.gauge import Id, Triple, nearest_id
 from loads.records.moment import Moment
 
 Skill = Literal["lift"]
@@ -140,3 +150,35 @@ class BarrierClock(Record):
     def newest_drill(self) -> Drill | None:
         """The drill of the latest day, or None."""
         return max(self.drill, key=lambda drill: drill.date, default=None)
+
+
+def crew_problems(crews: Sequence[Crew], clocks: Mapping[str, BarrierClock]) -> list[Triple]:
+    """What is wrong with the crews of a scenario as a whole.
+
+    Parameters
+    ----------
+    crews
+        Of the scenario.
+    clocks
+        By the path of their barrier, for example ``closure[C7]``.
+
+    Returns
+    -------
+    list of (path, value, rule)
+        For `loads.records.base.several_problems`.
+    """
+    counts = Counter(crew.id for crew in crews)
+    problems = [
+        (f"crew[{name}].id", f'"{name}"', f"{count} crews have it; each needs its own")
+        for name, count in counts.items()
+        if count > 1
+    ]
+    return problems + [
+        (
+            f"{path}.clock.crew",
+            f'"{clock.crew}"',
+            f"no crew has that id{nearest_id(clock.crew, counts)}",
+        )
+        for path, clock in clocks.items()
+        if clock.crew and clock.crew not in counts
+    ]

@@ -17,6 +17,7 @@ from loads.records.base import Measure, Name, Note, Record, read_date, several_p
 from loads.records.panel import Elevation
 
 Triple = tuple[str, str, str]
+_LEAST_RISE = 1e-6
 Id = Annotated[str, Field(min_length=1, max_length=24, pattern=r"^[^\x00-\x1f\x7f]*$")]
 
 
@@ -30,7 +31,9 @@ def _difference(meaning: str, example: str) -> Measure:
 
 _table_stage = _stage("Reading of the gauge", "20 ft")
 _table_offset = _difference("Level at the barrier less level at the gauge", "-0.6 ft")
-Pair = tuple[Annotated[Quantity, _table_stage], Annotated[Quantity, _table_offset]]
+Pair = Annotated[
+    tuple[Annotated[Quantity, _table_stage], Annotated[Quantity, _table_offset]], Field(strict=False)
+]
 
 
 class Transfer(Record):
@@ -116,7 +119,7 @@ def _rising_problems(i: int, lower: Pair, upper: Pair) -> list[Triple]:
     if upper[0].value <= lower[0].value:
         rule = f'it must be above the reading before it, "{lower[0].text}"'
         return [(f"table[{i}]", f'"{upper[0].text}"', rule)]
-    if upper[0].value + upper[1].value <= lower[0].value + lower[1].value:
+    if upper[0].value + upper[1].value - lower[0].value - lower[1].value < _LEAST_RISE:
         rule = "the level at the barrier must rise with the reading, and here it does not"
         return [(f"table[{i}]", f'"{upper[1].text}"', rule)]
     return []
@@ -236,8 +239,13 @@ def gauge_problems(gauges: Sequence[Gauge], barriers: Collection[str], datum: st
         for i, transfer in enumerate(gauge.transfer):
             for barrier in transfer.to:
                 if barrier not in barriers:
-                    near = difflib.get_close_matches(barrier, sorted(barriers), n=1, cutoff=0.5)
-                    cure = f'; did you mean "{near[0]}"?' if near else ""
                     where = f"gauge[{gauge.id}].transfer[{i}].to"
-                    problems.append((where, f'"{barrier}"', f"no barrier has that id{cure}"))
+                    rule = f"no barrier has that id{nearest_id(barrier, barriers)}"
+                    problems.append((where, f'"{barrier}"', rule))
     return problems
+
+
+def nearest_id(name: str, known: Collection[str]) -> str:
+    """End of the sentence about an unknown id: the nearest known one, or nothing."""
+    near = difflib.get_close_matches(name, sorted(known), n=1, cutoff=0.5)
+    return f'; did you mean "{near[0]}"?' if near else ""

@@ -24,7 +24,9 @@ Modulus = Annotated[
     ),
 ]
 Capacity = Annotated[Quantity, Measure(kind="force", meaning="Highest force", above="0 lb")]
-MomentCapacity = Annotated[Quantity, Measure(kind="moment", meaning="Highest bending moment", above="0 lb·ft")]
+MomentCapacity = Annotated[
+    Quantity, Measure(kind="moment", meaning="Highest bending moment", above="0 lb·ft")
+]
 Sag = Annotated[
     Quantity,
     Measure(kind="length", meaning="Greatest deflection", above="0 ft", most="10 ft", example="0.5 in"),
@@ -40,9 +42,9 @@ class Section(Record):
     """Cross-section of a part: its outer sizes, or its properties about the axis it bends about."""
 
     shape: SectionShape = "rectangle"
-    thickness: (
-        Annotated[Quantity, small_size("Size along the flow, the depth in bending", "2 in")] | None
-    ) = None
+    thickness: Annotated[Quantity, small_size("Size along the flow, the depth in bending", "2 in")] | None = (
+        None
+    )
     wall: Annotated[Quantity, small_size("Thickness of the walls of a hollow section", "0.125 in")] | None = (
         None
     )
@@ -50,9 +52,7 @@ class Section(Record):
         default=0, description="Inner ribs along the flow, as thick as the walls"
     )
     section_modulus: (
-        Annotated[
-            Quantity, Measure(kind="section modulus", meaning="Elastic section modulus", above="0 in3")
-        ]
+        Annotated[Quantity, Measure(kind="section modulus", meaning="Elastic section modulus", above="0 in3")]
         | None
     ) = None
     second_moment: (
@@ -64,9 +64,7 @@ class Section(Record):
     shear_area: (
         Annotated[
             Quantity,
-            Measure(
-                kind="area", meaning="Area by which a shear force is a shear stress", above="0 in2"
-            ),
+            Measure(kind="area", meaning="Area by which a shear force is a shear stress", above="0 in2"),
         ]
         | None
     ) = None
@@ -98,7 +96,9 @@ class LogSection(Section):
     """Cross-section of a log."""
 
     height: (
-        Annotated[Quantity, small_size("Size along the log's height; the effective height if left out", "9 in")]
+        Annotated[
+            Quantity, small_size("Size along the log's height; the effective height if left out", "9 in")
+        ]
         | None
     ) = None
 
@@ -139,7 +139,8 @@ class PostLimits(Record):
     shear: Capacity | None = None
     deflection: Sag | None = None
     brace_force: (
-        Annotated[Quantity, Measure(kind="force", meaning="Highest force along the brace", above="0 lb")] | None
+        Annotated[Quantity, Measure(kind="force", meaning="Highest force along the brace", above="0 lb")]
+        | None
     ) = None
     anchor_tension: (
         Annotated[Quantity, Measure(kind="force", meaning="Highest tension of one bolt", above="0 lb")] | None

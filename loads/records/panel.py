@@ -12,7 +12,7 @@ from loads.arc import ArcShape
 from loads.outline import outline_problem
 from loads.quantity import Quantity
 from loads.records.base import Measure, Name, Note, Record, several_problems
-from loads.records.sediment import Sediment
+from loads.records.sediment import Sediment, order_problems
 
 Shape = Literal["rectangle", "trapezoid", "circle", "outline", "arc"]
 
@@ -248,7 +248,7 @@ class Panel(Record):
             for i, layer in indexed:
                 problems += self._layer_problems(i, layer, foot, first=i == indexed[0][0])
             for (_, upper), (i, lower) in pairwise(indexed):
-                problems += _order_problems(i, upper, lower)
+                problems += order_problems(i, upper, lower)
         return problems
 
     def _layer_problems(
@@ -273,27 +273,6 @@ class Panel(Record):
             rule = "must be zero on an inclined face: the formula with cohesion is for a vertical one"
             problems.append((f"{where}.cohesion", f'"{layer.cohesion.text}"', rule))
         return problems
-
-
-def _order_problems(i: int, upper: Sediment, lower: Sediment) -> list[tuple[str, str, str]]:
-    where = f"sediment[{i}]"
-    if lower.top.value >= upper.top.value:
-        rule = f'it must lie below the top of the layer above it on that side, "{upper.top.text}"'
-        return [(f"{where}.top", f'"{lower.top.text}"', rule)]
-    kinds = {upper.pressure, lower.pressure}
-    if "equivalent fluid" in kinds and len(kinds) > 1:
-        rule = (
-            "an equivalent fluid already contains the water and says nothing of the soil's weight; a side "
-            "is either all equivalent fluid or none of it"
-        )
-        return [(f"{where}.pressure", f'"{lower.pressure}"', rule)]
-    if lower.pressure == "fluid mud" and upper.pressure != "fluid mud":
-        return [(f"{where}.pressure", '"fluid mud"', "fluid mud must lie above every soil layer of its side")]
-    above, below = upper.fluid_unit_weight, lower.fluid_unit_weight
-    if lower.pressure == "fluid mud" and above and below and below.value < above.value:
-        rule = "must not be lighter than the fluid mud above it"
-        return [(f"{where}.fluid_unit_weight", f'"{below.text}"', rule)]
-    return []
 
 
 def _tupled(value: object) -> object:

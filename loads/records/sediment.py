@@ -209,3 +209,25 @@ class Sediment(Record):
             rule = "must be zero with wall friction: Coulomb's coefficient is for soil without cohesion"
             problems.append(("cohesion", f'"{self.cohesion.text}"', rule))
         return problems
+
+
+def order_problems(i: int, upper: Sediment, lower: Sediment) -> list[tuple[str, str, str]]:
+    """What is wrong with a layer, the one at `i` of its panel, below another of the same side."""
+    where = f"sediment[{i}]"
+    if lower.top.value >= upper.top.value:
+        rule = f'it must lie below the top of the layer above it on that side, "{upper.top.text}"'
+        return [(f"{where}.top", f'"{lower.top.text}"', rule)]
+    kinds = {upper.pressure, lower.pressure}
+    if "equivalent fluid" in kinds and len(kinds) > 1:
+        rule = (
+            "an equivalent fluid already contains the water and says nothing of the soil's weight; a side "
+            "is either all equivalent fluid or none of it"
+        )
+        return [(f"{where}.pressure", f'"{lower.pressure}"', rule)]
+    if lower.pressure == "fluid mud" and upper.pressure != "fluid mud":
+        return [(f"{where}.pressure", '"fluid mud"', "fluid mud must lie above every soil layer of its side")]
+    above, below = upper.fluid_unit_weight, lower.fluid_unit_weight
+    if lower.pressure == "fluid mud" and above and below and below.value < above.value:
+        rule = "must not be lighter than the fluid mud above it"
+        return [(f"{where}.fluid_unit_weight", f'"{below.text}"', rule)]
+    return []

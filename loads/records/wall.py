@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from typing import Annotated, ClassVar, Literal
 
 from pydantic import Field, field_validator, model_validator
@@ -141,11 +142,12 @@ class Wall(Record):
         return tuple(layer for layer in self.sediment if layer.side == side)
 
     def ground(self, side: str) -> float:
-        """Elevation of the ground on one side, not below the base. [m]."""
+        """Elevation of the ground on one side; minus infinity where none is said to cover the base. [m]."""
         entered = self.flood_ground if side == "flood" else self.protected_ground
         layers = self.layers(side)
-        top = layers[0].top.value if layers else (entered.value if entered else self.base.value)
-        return max(top, self.base.value)
+        if layers:
+            return layers[0].top.value
+        return entered.value if entered else -math.inf
 
     def extent(self) -> tuple[float, float, float]:
         """Lowest and highest elevation of the section and width of its base. [m]."""

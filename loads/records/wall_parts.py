@@ -133,6 +133,8 @@ class Foundation(Record):
                 for name in needed
                 if getattr(self, name) is None
             ]
+        if self.exit_gradient_factor is not None and self.saturated_unit_weight is None:
+            problems.append(("saturated_unit_weight", "", "is missing; exit_gradient_factor needs it"))
         if problems:
             raise several_problems(problems)
         return self

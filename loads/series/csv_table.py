@@ -204,7 +204,7 @@ class _Reader:
             raise refusal(place, f"is not in {parameter.unit}, the unit of its parameter code", unit)
         return Collector(
             name=f"{gauge} {column.name}".strip(), parameter=parameter.name if parameter else "water level",
-            kind=column.kind, unit=unit, gauge=gauge, datum=parameter.datum if parameter else None,
+            kind=column.kind, unit=unit, gauge=gauge, datum=parameter.datum if parameter else column.datum,
             issued=self._issued(cells, place),
         )  # fmt: skip
 

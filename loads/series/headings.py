@@ -5,8 +5,8 @@ from __future__ import annotations
 import re
 from dataclasses import dataclass, field
 
-from loads.series.levels import UnreadableLevelError, is_unit, unit_named
-from loads.series.refusals import refusal
+from loads.series.levels import UnreadableLevelError, is_unit, unit_and_datum, unit_named
+from loads.series.refusals import printable, refusal
 from loads.series.series import Kind
 from loads.series.stamps import UnreadableTimeError, Zone, zone_named
 
@@ -26,12 +26,13 @@ _ROLES = {
 }  # fmt: skip
 _LEVEL = re.compile(
     r"\b(stages?|levels?|gage height|gauge height|height|elevation|wse|wl|value|primary|h|hg\w*|low|likely|"
-    r"high|minimum|maximum|water surface|forecast|fcst|observed|obs)\b"
+    r"high|water surface|forecast|fcst|observed|obs)\b"
 )
 _NOT_LEVEL = re.compile(
     r"\b(sigma|std|error|uncertainty|flags?|qual\w*|cd|inferred|tol|limit\w*|accuracy|flow|discharge|temp\w*|rain\w*|"
     r"precip\w*|snow|wind|pressure|conductivity|turbidity|battery|speed|velocity|depth|below|wave|count|id|x|y|lat\w*|"
-    r"lon\w*|last modified|salinity|humidity|sea level pressure|minus|plus|crest)\b|limittol"
+    r"lon\w*|last modified|salinity|humidity|sea level pressure|minus|plus|"
+    r"crest|flood|action|minor|moderate|major|warning|threshold|alarm|datum|zero|change|rise|rate|sill|bank|ground)\b|limittol"
 )
 _FORECAST = re.compile(r"\b(forecast|fcst|predicted|predictions?|low|likely|high)\b")
 _HINT = re.compile(r"(.*?)\s*(?:[\[(]([^\])]*)[\])]|[:;,]\s*(.+))\s*")
@@ -68,6 +69,7 @@ class LevelColumn:
     name: str
     kind: Kind
     unit: str
+    datum: str | None = None
 
 
 def _words(text: str) -> str:
@@ -84,7 +86,7 @@ def heading(text: str) -> Heading:
     >>> heading("datetime_utc").words
     'datetime'
     """
-    plain = " ".join(text.strip().split())[:200]
+    plain = printable(" ".join(text.strip().split())[:200])
     match = _HINT.fullmatch(plain)
     if match:
         return Heading(text=plain, words=_words(match[1]), hint=(match[2] or match[3] or "").strip())
@@ -140,7 +142,11 @@ def columns_of(cells: list[str], *, number: int, unit: str | None, kind: Kind | 
     free = [(index, one) for index, one in enumerate(headings) if index not in taken and one.words]
     levels = [(i, one) for i, one in free if _LEVEL.search(one.words) and not _NOT_LEVEL.search(one.words)]
     if not levels:
-        levels = [(i, one) for i, one in free if is_unit(one.hint) and not _NOT_LEVEL.search(one.words)]
+        levels = [
+            (i, one)
+            for i, one in free
+            if is_unit(one.hint.split(" ")[0]) and not _NOT_LEVEL.search(one.words)
+        ]
     if not levels:
         levels = [(i, one) for i, one in free if not _NOT_LEVEL.search(one.words)]
         levels = levels if len(levels) == 1 else []
@@ -186,7 +192,7 @@ def _level(
             )
         stated = "" if "unit" in found.others else str(unit)
     try:
-        symbol = unit_named(stated) if stated else ""
+        symbol, datum = unit_and_datum(stated) if stated else ("", None)
         asked = unit_named(unit) if unit else symbol
     except UnreadableLevelError as error:
         raise refusal(column, f"has a unit that {error}", stated or unit) from None
@@ -194,7 +200,7 @@ def _level(
         raise refusal(column, f"is headed {symbol}, but {asked} was stated; one of the two is wrong")
     forecast = "issued" in found.others or _FORECAST.search(one.words) is not None
     told: Kind = kind or ("forecast" if forecast else "observed")
-    return LevelColumn(index=index, name=one.words, kind=told, unit=symbol)
+    return LevelColumn(index=index, name=one.words, kind=told, unit=symbol, datum=datum)
 
 
 def _tell(found: Columns, headings: list[Heading]) -> None:
@@ -204,6 +210,11 @@ def _tell(found: Columns, headings: list[Heading]) -> None:
     kinds = {column.kind for column in found.levels}
     if kinds == {"observed"}:
         found.notes.append("Nothing says forecast, so the levels are taken as observed.")
+    bare = [column.name for column in found.levels if not column.datum]
+    if any(re.search(r"\b(elevation|wse)\b", name) for name in bare):
+        found.notes.append(
+            "An elevation is given without its datum; write it in the heading, as [ft NAVD88]."
+        )
     used = {found.time, found.clock, *found.others.values(), *(column.index for column in found.levels)}
     rest = [one.text for index, one in enumerate(headings) if index not in used and one.text]
     if rest:

@@ -19,6 +19,7 @@ _MARKS = (
     "out_of_service", "no data", "not available", "not current", "",
 )  # fmt: skip
 _NO_DATA = frozenset(_MARKS)
+_WITH_DATUM = re.compile(r"(\S+) (?:above )?([A-Z][A-Z0-9]{2,11}(?:[ -]?\d{2,4})?)", re.ASCII)
 LOWEST, HIGHEST = -1000.0, 10_000.0
 """No still water stands outside these elevations. [m]"""
 
@@ -113,6 +114,30 @@ def unit_named(text: str) -> str:
     if kinds:
         raise UnreadableLevelError(f"is a unit of {kinds[0]}; a level is in {UNIT_EXAMPLES}")
     raise UnreadableLevelError(f"is not a unit of length known here; a level is in {UNIT_EXAMPLES}")
+
+
+def unit_and_datum(text: str) -> tuple[str, str | None]:
+    """Symbol of a unit and name of a datum behind it, None for a reading above the gauge's own zero.
+
+    Raises
+    ------
+    UnreadableLevelError
+        Not a length, or words behind it that are not plainly the name of a datum.
+
+    Examples
+    --------
+    >>> unit_and_datum("ft above NAVD88")
+    ('ft', 'NAVD88')
+    >>> unit_and_datum("mASD")
+    ('m', None)
+    """
+    plain = " ".join(text.split())
+    if plain.casefold() == "maod":
+        return "m", "AOD"
+    match = _WITH_DATUM.fullmatch(plain)
+    if match and is_unit(match[1]):
+        return unit_named(match[1]), match[2]
+    return unit_named(plain), None
 
 
 def is_unit(text: str) -> bool:

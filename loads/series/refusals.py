@@ -10,15 +10,24 @@ MOST_PROBLEMS = 10
 _SHOWN = 40
 
 
+def printable(text: str) -> str:
+    """The text with a blank in the place of whatever cannot be printed."""
+    return text if text.isprintable() else "".join(one if one.isprintable() else " " for one in text)
+
+
 def shown(text: str) -> str:
     """What was read, in quotes, shortened and without control characters."""
-    plain = "".join(character if character.isprintable() else " " for character in text[: _SHOWN + 1])
+    plain = printable(text[: _SHOWN + 1])
     return f'"{plain[:_SHOWN]}…"' if len(text) > _SHOWN else f'"{plain}"'
 
 
 def refusal(path: str, rule: str, value: str | None = None) -> ScenarioError:
     """One problem, ready to raise."""
-    return ScenarioError([Problem(path=path, value="" if value is None else shown(value), rule=rule)])
+    return ScenarioError([_problem(path, rule, value)])
+
+
+def _problem(path: str, rule: str, value: str | None) -> Problem:
+    return Problem(path=printable(path), value="" if value is None else shown(value), rule=printable(rule))
 
 
 class Faults:
@@ -35,7 +44,7 @@ class Faults:
         ScenarioError
             There are `MOST_PROBLEMS` of them.
         """
-        self._problems.append(Problem(path=path, value="" if value is None else shown(value), rule=rule))
+        self._problems.append(_problem(path, rule, value))
         if len(self._problems) >= MOST_PROBLEMS:
             raise ScenarioError(self._problems)
 

@@ -177,11 +177,11 @@ class _Reader:
             if message.revised:
                 made.notes.append("The message revises an earlier one.")
             self.collectors[key] = made
-        number, qualifier, missing = value_of(text)
+        number, qualifier, missing = value_of(text, head.qualifier)
         if missing:
             self.collectors[key].drop(label(missing))
         else:
-            self.collectors[key].add(stamp, number, qualifier or head.qualifier)
+            self.collectors[key].add(stamp, number, qualifier)
 
 
 def _matched(pattern: re.Pattern[str], text: str, rule: str) -> re.Match[str]:

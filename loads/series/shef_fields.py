@@ -156,15 +156,15 @@ def interval_of(digits: str, zone: Zone) -> int:
     return int(match[2]) * {"S": 1, "N": 60, "H": 3600, "D": 86400}[match[1]]
 
 
-def value_of(text: str) -> tuple[str, str, str]:
-    """Number, qualifier and reason why it is no data; the number is empty in that case."""
+def value_of(text: str, usual: str = "") -> tuple[str, str, str]:
+    """Number, qualifier (or the usual one) and reason why it is no data; the number is empty in that case."""
     plain = re.sub(r'"[^"]*"', "", text).strip()
     match = _VALUE.fullmatch(plain)
     if not match:
         if is_no_data(plain):
             return "", "", plain or "empty"
         raise UnreadableFieldError("has a value that is neither a number nor M for missing")
-    qualifier = match[2].upper()
+    qualifier = match[2].upper() or usual
     if qualifier in _REJECTED:
         return "", qualifier, f"marked {qualifier} (bad or rejected)"
     return match[1], qualifier, ""

@@ -8,7 +8,7 @@ import json
 from collections.abc import Iterator
 from typing import Any
 
-from loads.series.refusals import THE_FILE, refusal
+from loads.series.refusals import THE_FILE, printable, refusal
 from loads.series.stamps import UnreadableTimeError, Zone, zone_named
 
 MOST_BYTES = 50_000_000
@@ -137,4 +137,4 @@ def within(value: object, *keys: str | int) -> Any:
 def label(value: object, longest: int = 80) -> str:
     """A name from a file, on one line, shortened, printable characters only."""
     text = " ".join(scalar(value).split())
-    return "".join(character for character in text[:longest] if character.isprintable())
+    return printable(text[:longest])

@@ -124,7 +124,7 @@ def wrong_unit(reading: float, lowest: float, highest: float, *, unit: str = "")
         if unit in ("", symbol) and lowest - slack <= other <= highest + slack:
             return Trap(
                 name="unit",
-                template="The level {reading} does not fit this gauge's record, {lowest} to {highest}; taken as "
+                template="The level {reading} does not fit this gauge's record, {lowest} to {highest}; as "
                 f"{meant} instead of {typed} it would be {{other}}. "
                 f"Were {meant} typed into a field of {typed}?",
                 figures={
@@ -177,8 +177,8 @@ def flat_while_rising(
         return None
     return Trap(
         name="flat",
-        template="The gauge has not moved by more than {spread} for {spell}, while the forecast rises by {risen} "
-        "in as long: the gauge may be stuck, iced or at its ceiling. Look at the staff.",
+        template="The gauge has not moved by more than {spread} for {spell}, while the forecast rises by "
+        "{risen} in as long: the gauge may be stuck, iced or at its ceiling. Look at the staff.",
         figures={"spread": difference(spread), "spell": duration(spell), "risen": difference(risen)},
     )
 
@@ -205,9 +205,9 @@ def fast_jump(series: Series, fastest: float) -> Trap | None:
     when = str(series.times[worst + 1]).replace("T", " ")
     return Trap(
         name="jump",
-        template=f"{{before}} to {{after}}: the level {verb} by {{change}} in {{step}} up to {when} UTC, faster "
-        f"than {{fastest}}; steps as fast: {int((rates > fastest).sum())}. Drift wood, a re-based gauge, a wrong "
-        "digit?",
+        template=f"{{before}} to {{after}}: the level {verb} by {{change}} in {{step}} up to {when} UTC, "
+        f"faster than {{fastest}}; steps as fast: {int((rates > fastest).sum())}. Drift wood, a re-based "
+        "gauge, a wrong digit?",
         figures={
             "before": level(float(series.values[worst])),
             "after": level(float(series.values[worst + 1])),

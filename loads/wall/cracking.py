@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from dataclasses import dataclass
+
 import numpy as np
 from numpy.typing import NDArray
 
@@ -44,33 +46,110 @@ def open_cracks(
 
     Each round opens at least what the one before opened, so the lengths settle at the least that is in
     balance, or run through.
+
+    Parameters
+    ----------
+    section, levels, site
+        As of `loads.wall.stability.stability`.
+    vertical, moment
+        Sums of all forces but uplift, about the toe, shape (n,). [N/m, N·m/m]
+
+    Returns
+    -------
+    tuple of Cracks and BoolArray
+        Open lengths, and whether they settled.
+
+    Notes
+    -----
+    With F(c) the length that would open under full head in a crack c, c = F(c) is sought from below by the
+    secant through two rounds; once a round goes too far, between the two sides by false position (Illinois
+    rule). The end at which the base first opens stays the one that opens.
     """
     states = levels.states
-    heel, toe = np.zeros(states), np.zeros(states)
+    width = np.broadcast_to(section.base_width, (states,))
+    search = _Search.of(states)
     settled = np.ones(states, dtype=bool)
     if not site.opens or site.path.rule == "none":
-        return Cracks(heel=heel, toe=toe), settled
-    width = np.broadcast_to(section.base_width, (states,))
+        return search.cracks(np.arange(states)), settled
     active = np.arange(states)
     for _ in range(ROUNDS):
         part = _rows(section, active)
         state = Levels(flood_side=levels.flood_side[active], protected_side=levels.protected_side[active])
-        push = uplift_of(part, state, site, Cracks(heel=heel[active], toe=toe[active])).push
+        push = uplift_of(part, state, site, search.cracks(active)).push
         found = base_pressure(
             -(vertical[active] + push.vertical),
             moment[active] + push.moment_horizontal + push.moment_vertical,
             width[active],
         )
-        new_heel, new_toe = open_lengths(found, width[active])
-        new_heel = np.maximum(new_heel, heel[active])
-        new_toe = np.minimum(np.maximum(new_toe, toe[active]), width[active] - new_heel)
-        grown = np.abs(new_heel - heel[active]) + np.abs(new_toe - toe[active])
-        heel[active], toe[active] = new_heel, new_toe
-        active = active[grown > SETTLED * width[active]]
+        active = active[search.step(active, open_lengths(found, width[active]), width[active])]
         if not len(active):
             break
     settled[active] = False
-    return Cracks(heel=heel, toe=toe), settled
+    return search.cracks(np.arange(states)), settled
+
+
+@dataclass
+class _Search:
+    """Where the search for the open length stands: present length, and what opens beyond it at both sides."""
+
+    length: FloatArray
+    at_heel: BoolArray
+    low: FloatArray
+    low_gap: FloatArray
+    high: FloatArray
+    high_gap: FloatArray
+    was_high: BoolArray
+
+    @classmethod
+    def of(cls, states: int) -> _Search:
+        """Nothing is open yet."""
+        unknown = np.full(states, np.nan)
+        return cls(
+            length=np.zeros(states),
+            at_heel=np.ones(states, dtype=bool),
+            low=unknown.copy(),
+            low_gap=unknown.copy(),
+            high=unknown.copy(),
+            high_gap=unknown.copy(),
+            was_high=np.zeros(states, dtype=bool),
+        )
+
+    def cracks(self, rows: NDArray[np.intp]) -> Cracks:
+        """Open lengths of some rows."""
+        length, at_heel = self.length[rows], self.at_heel[rows]
+        return Cracks(heel=np.where(at_heel, length, 0.0), toe=np.where(at_heel, 0.0, length))
+
+    def step(
+        self, rows: NDArray[np.intp], opened: tuple[FloatArray, FloatArray], width: FloatArray
+    ) -> BoolArray:
+        """Take in what opens with the present cracks; say which rows still move."""
+        first = np.isnan(self.low[rows])
+        self.at_heel[rows] = np.where(first, opened[0] >= opened[1], self.at_heel[rows])
+        length = self.length[rows]
+        gap = np.where(self.at_heel[rows], opened[0], opened[1]) - length
+        before, before_gap = self.low[rows], self.low_gap[rows]
+        bounded, over = ~np.isnan(self.high[rows]), gap < 0
+        halve_high = bounded & ~over & ~self.was_high[rows]
+        halve_low = over & self.was_high[rows]
+        self.low[rows] = np.where(over, before, length)
+        self.low_gap[rows] = np.where(over, before_gap * np.where(halve_low, 0.5, 1.0), gap)
+        self.high[rows] = np.where(over, length, self.high[rows])
+        self.high_gap[rows] = np.where(over, gap, self.high_gap[rows] * np.where(halve_high, 0.5, 1.0))
+        self.was_high[rows] = over
+        low, low_gap, high, high_gap = (
+            values[rows] for values in (self.low, self.low_gap, self.high, self.high_gap)
+        )
+        bounded |= over
+        fall = before_gap - low_gap
+        run = np.where(bounded, high - low, low - before)
+        fall = np.where(bounded, low_gap - high_gap, fall)
+        plain = np.isnan(run) | ~(fall > 0)
+        stride = np.divide(low_gap * run, fall, out=low_gap.copy(), where=~plain)
+        stride = np.where(bounded, np.clip(stride, 0.0, run), np.maximum(stride, low_gap))
+        self.length[rows] = np.minimum(low + stride, width)
+        near = SETTLED * width
+        still = (np.abs(gap) > near) & ~(bounded & (run <= near))
+        return np.asarray(still & (np.abs(self.length[rows] - length) > 0))
 
 
 def _rows(section: Section, rows: NDArray[np.intp]) -> Section:

@@ -7,7 +7,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from loads.arrays import FloatArray
+from loads.arrays import BoolArray, FloatArray
 from loads.diagram import Diagram
 from loads.load import SIDES, TOWARD
 from loads.states import Levels
@@ -55,7 +55,7 @@ class Member:
         return self.diagram.moment(place)
 
 
-def _member(name: str, diagram: Diagram, root: FloatArray, tip: FloatArray, holds: FloatArray) -> Member:
+def _member(name: str, diagram: Diagram, root: FloatArray, tip: FloatArray, holds: BoolArray) -> Member:
     states = diagram.states
     place = np.broadcast_to(root, (states,))
     blank = np.where(holds, 1.0, np.nan)
@@ -74,10 +74,10 @@ def members(section: Section, levels: Levels, site: Site, found: Stability) -> t
 
     Notes
     -----
-    Stem: horizontal pressure of water and soil on both sides, passive resistance left out; weight and water on
-    battered faces do not bend it here. Heel and toe: weight of the slab and of a key, soil and water above,
-    uplift and base pressure below. Where the crack runs through there is no base pressure to go by and the
-    slabs' figures are NaN.
+    Stem: horizontal pressure of water and soil on both sides, passive resistance left out; weight, and water
+    on battered faces, do not bend it here. Heel and toe: weight of the slab and of a key, soil
+    and water above, uplift and base pressure below. Where the crack runs through there is no base pressure to
+    go by and the figures of the slabs are NaN.
     """
     stem = section.stem
     if stem is None:
@@ -142,7 +142,7 @@ def _slab_loads(
 
 
 def _hanging(z: FloatArray, unit_weight: float) -> FloatArray:
-    return -unit_weight * (z.max(axis=1) - z.min(axis=1))
+    return np.asarray(-unit_weight * (z.max(axis=1) - z.min(axis=1)))
 
 
 def _uplift_pieces(found: Stability) -> list[Piece]:

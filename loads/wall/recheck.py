@@ -1,13 +1,14 @@
 """The second computation of a wall's forces: quadrature along its boundary, and shapely's areas.
 
 Pressures are taken point by point from their definitions; nothing here knows the closed forms of
-`loads.wall.pressing`, `loads.wall.uplift` and `loads.diagram`. Only the open lengths of the base are taken over
-from the first computation.
+`loads.wall.pressing`, `loads.wall.uplift` and `loads.diagram`. Only the open lengths of the base are taken
+over from the first computation.
 """
 
 from __future__ import annotations
 
 from dataclasses import dataclass
+from itertools import pairwise
 
 import numpy as np
 import shapely
@@ -122,7 +123,7 @@ def _water(
     total: _Sum, section: Section, side: str, level: FloatArray, unit_weight: float, toe: tuple[float, float]
 ) -> None:
     corners = np.stack([part[0] for part in section.chain(side)], axis=1)
-    for start, end in zip(corners[:-1], corners[1:], strict=True):
+    for start, end in pairwise(corners):
         rise = end[1] - start[1]
         surface = (
             np.clip((np.maximum(level, -_FAR) - start[1]) / rise, 0, 1) if rise else np.zeros(len(level))
@@ -140,7 +141,7 @@ def _base(
         return
     corners = np.stack([part[0] for part in section.chain("base")], axis=1)
     unit_weight = max(site.waters.flood, site.waters.protected)
-    for number, (start, end) in enumerate(zip(corners[:-1], corners[1:], strict=True)):
+    for number, (start, end) in enumerate(pairwise(corners)):
         run = end[0] - start[0]
         places = [found.cracks.heel, corners[-1, 0] - found.cracks.toe]
         places += [np.full(levels.states, place) for place, _ in site.path.cutoffs]
@@ -210,7 +211,8 @@ def _soil_weight(
         ):
             cut = shapely.intersection(region, shapely.box(x.min() - 1, low, x.max() + 1, high))
             area = shapely.area(cut)
-            across = np.where(area > 0, shapely.get_x(shapely.centroid(cut)), 0.0)
+            across = np.zeros_like(area)
+            across[area > 0] = shapely.get_x(shapely.centroid(cut[area > 0]))
             total.vertical -= area * weight
             total.moment += area * weight * (across - toe[0])
     surcharge = layers[0].surcharge

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from dataclasses import dataclass
 
 import numpy as np
@@ -126,7 +127,8 @@ def stability(section: Section, levels: Levels, site: Site) -> Stability:
     vertical = vertical + lift.push.vertical
     moment = moment + lift.push.moment_horizontal + lift.push.moment_vertical
     base = base_pressure(-vertical, moment, section.base_width)
-    passive = -sum((row.value for row in soil_forces([p for p in soil if p.passive], section.base)), nil)
+    resisting = soil_forces([push for push in soil if push.passive], section.base)
+    passive = nil - sum((row.value for row in resisting), nil)
     width = np.broadcast_to(section.base_width, nil.shape)
     bonded = base.compressed * width if site.opens else width
     return Stability(
@@ -153,13 +155,23 @@ def stability(section: Section, levels: Levels, site: Site) -> Stability:
         key_sliding=key_sliding(
             section, levels, site, soil=soil, forces=forces, bonded=bonded, cracks=cracks
         ),
-        ratios=_moment_ratios(forces, horizontal, width),
+        ratios=moment_ratios(forces, horizontal, width),
         flotation=_flotation(forces),
     )
 
 
-def _moment_ratios(forces: tuple[Force, ...], horizontal: FloatArray, width: FloatArray) -> MomentRatios:
-    """Moments about the toe, or about the heel where the wall is pushed toward the flood side."""
+def moment_ratios(forces: Sequence[Force], horizontal: FloatArray, width: FloatArray) -> MomentRatios:
+    """Textbook ratios of moments about the toe, or the heel where the wall is pushed to the flood side.
+
+    Parameters
+    ----------
+    forces
+        Every force, its moment about the toe; each resists or overturns as a whole.
+    horizontal
+        Sum of the horizontal forces, shape (n,). [N/m]
+    width
+        Of the base, shape (n,). [m]
+    """
     resisting, overturning, lifting = (np.zeros_like(horizontal) for _ in range(3))
     reverse = horizontal < 0
     for row in forces:

@@ -16,6 +16,7 @@ from loads.closure.leakage import SealRate, end_seal_leakage, inflow, joint_leak
 from loads.closure.overflow import FORMULAS, Openings, overflow
 from loads.closure.weirs import (
     drowning_factor,
+    flow_ackers,
     flow_kindsvater_carter_contracted,
     flow_rehbock,
     flow_sharp_crest,
@@ -128,35 +129,35 @@ def test_at_its_stated_head_a_seal_leaks_its_stated_rate(head: float, exponent: 
     assert found.item() == pytest.approx(8e-6, rel=1e-12)
 
 
+thicknesses = st.one_of(st.just(math.nan), st.floats(0.005, 0.5))
+
+
 @given(
     height=st.floats(0, 3),
-    head=st.floats(0, 4),
-    more=st.floats(0, 2),
-    protected=levels,
-    thickness=st.one_of(st.just(math.nan), st.floats(0.005, 0.5)),
+    deepest=st.sampled_from([0.05, 0.5, 4.0]),
+    behind=st.one_of(st.just(-math.inf), st.floats(-0.5, 2)),
+    thickness=thicknesses,
     width=st.floats(0.05, 12),
 )
 def test_more_water_never_sends_less_over(
-    *, height: float, head: float, more: float, protected: float, thickness: float, width: float
+    *, height: float, deepest: float, behind: float, thickness: float, width: float
 ) -> None:
-    opening = bay(height, width=width, thickness=thickness)
-    found = overflow(opening, np.array([height + head, height + head + more]), np.full(2, protected))
-    slack = 1 + 1e-12
-    assert found.total_low[0] <= found.total_low[1] * slack
-    assert found.total_high[0] <= found.total_high[1] * slack
+    flood = height + np.linspace(-0.1, 1.0, 151) * deepest
+    found = overflow(bay(height, width=width, thickness=thickness), flood, np.full(151, height + behind))
     assert (found.low <= found.high).all()
-    driving = found.head[:, 0] - max(protected - height, 0.0)
-    assert (found.total_high[driving > 1e-6] > 0).all()
+    for flow in (found.total_low, found.total_high):
+        assert (np.diff(flow) >= -1e-12 * flow[1:]).all()
+    driving = found.head[:, 0] - max(behind, 0.0)
+    assert (found.total_low[driving > 1e-6] > 0).all()
     assert (found.total_high[driving <= 0] == 0).all()
 
 
-@given(st.floats(0.05, 3), st.floats(0, 1), st.floats(0, 1))
-def test_water_behind_the_crest_only_slows_it(head: float, first: float, second: float) -> None:
-    low, high = sorted([first, second])
-    found = overflow(bay(), np.full(2, 1 + head), 1 + head * np.array([low, high]))
-    slack = 1 + 1e-9
-    assert found.total_low[1] <= found.total_low[0] * slack
-    assert found.total_high[1] <= found.total_high[0] * slack
+@given(st.floats(0.02, 3), thicknesses, st.floats(0, 2))
+def test_water_behind_the_crest_only_slows_it(head: float, thickness: float, ground: float) -> None:
+    opening = bay(2.0, ground=ground, thickness=thickness)
+    found = overflow(opening, np.full(51, 2.0 + head), 2.0 + head * np.linspace(-0.1, 1.1, 51))
+    for flow in (found.total_low, found.total_high):
+        assert (np.diff(flow) <= 1e-12 * flow[:-1]).all()
     assert drowning_factor(one(head), one(0.0)).item() == 1
 
 
@@ -199,6 +200,18 @@ def test_the_range_is_that_of_the_formulas() -> None:
     thin = overflow(bay(thickness=0.1), one(1.5), one(-math.inf))
     assert "broad crest" not in thin.formulas()
     assert thin.low.item() == flow_kindsvater_carter_contracted(head, crest, width).item()
+
+
+def test_outside_its_heads_a_formula_only_bounds_the_range() -> None:
+    width, crest = one(3.0), one(0.5)
+    past = overflow(bay(0.5), one(0.5 + 1.15), one(-math.inf))
+    last = flow_ackers(one(2.2 * 0.5)[:, None], crest, width).item()
+    assert past.high.item() == pytest.approx(last, rel=1e-12)
+    assert "Ackers" not in past.formulas()
+    before = overflow(bay(0.5, thickness=0.01), one(0.5 + 0.0299), one(-math.inf))
+    first = flow_kindsvater_carter_contracted(one(0.03)[:, None], crest, width).item()
+    assert before.low.item() == pytest.approx(first, rel=1e-12)
+    assert first < flow_sharp_crest(one(0.0299)[:, None], width).item()
 
 
 def test_inflow_is_the_sum_of_its_parts() -> None:

@@ -94,7 +94,7 @@ def test_the_two_forms_agree_as_far_as_they_are_published(
 
 @pytest.mark.source(
     "NIOSH94110",
-    f"{PLACE}; worked by hand at H 50 cm, V 125 cm, D 90 cm and H 20 in, V 50 in, D 36 in; AM 1 − 0.0032 A is "
+    f"{PLACE}; worked by hand at H 50 cm, V 125 cm, D 90 cm and H 20 in, V 50 in, D 36 in; AM is "
     "from memory, to be confirmed",
 )
 @pytest.mark.parametrize(

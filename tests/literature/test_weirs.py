@@ -10,6 +10,7 @@ import pytest
 from scipy.optimize import brentq
 
 from loads.arrays import FloatArray
+from loads.closure.overflow import Openings, overflow
 from loads.closure.weirs import (
     FRANCIS_COEFFICIENT,
     drowning_factor,
@@ -133,3 +134,39 @@ def test_spread_between_formulas(agree: Agree) -> None:
 def test_crest_drowned_to_half_its_head(agree: Agree) -> None:
     found = drowning_factor(np.array([[0.6]]), np.array([[0.3]]))
     agree(found, printed("0.8454"), what="share of the free flow")
+
+
+LIMITS = [
+    ("Rehbock", 0.03, 0.75, 1.0, 0.3, 0.3),
+    ("Ackers", 0.02, 4.0, 2.2, 0.15, 0.0),
+    ("Kindsvater and Carter, full width", 0.03, 4.0, 2.0, 0.1, 0.15),
+    ("Kindsvater and Carter, contracted", 0.03, 4.0, 2.0, 0.1, 0.15),
+]
+
+
+def applies(name: str, *, head: float, crest_height: float, width: float) -> bool:
+    crest = Openings(
+        crest=np.array([crest_height]),
+        width=np.array([width]),
+        ground=np.array([0.0]),
+        crest_thickness=np.array([np.nan]),
+    )
+    return name in overflow(crest, np.array([crest_height + head]), np.array([-np.inf])).formulas()
+
+
+@pytest.mark.source("Blevins1984", "published; limits of use in an open library's documentation")
+@pytest.mark.parametrize("limits", LIMITS, ids=[limits[0] for limits in LIMITS])
+def test_limits_of_use(limits: tuple[str, float, float, float, float, float]) -> None:
+    name, least, most, ratio, height, width = limits
+    less, more = 1 - 1e-6, 1 + 1e-6
+    wide, high = max(width, 0.1) * more, 10.0
+    assert applies(name, head=least * more, crest_height=high, width=wide)
+    assert not applies(name, head=least * less, crest_height=high, width=wide)
+    assert applies(name, head=most * less, crest_height=high, width=wide)
+    assert applies(name, head=most * more, crest_height=high, width=wide) is (name != "Rehbock")
+    low = 0.35
+    assert applies(name, head=ratio * low * less, crest_height=low, width=wide)
+    assert not applies(name, head=ratio * low * more, crest_height=low, width=wide)
+    assert applies(name, head=0.05, crest_height=height * more, width=wide)
+    assert not applies(name, head=0.05, crest_height=height * less, width=wide)
+    assert width == 0 or not applies(name, head=0.05, crest_height=high, width=width * less)

@@ -10,7 +10,7 @@ from typing import Protocol
 import pytest
 from streamlit.testing.v1 import AppTest
 
-from loads.scenario_file import Document, parse_document, read_file
+from loads.scenario_file import BARRIER_KEYS, Document, parse_document, read_file
 from tests.hand_calculation import number_of
 from tests.lines import SCENARIOS
 from tests.webapp.driving import ROOT
@@ -95,8 +95,8 @@ def test_every_page_runs_in_both_unit_systems(path: Path) -> None:
 def test_every_barrier_has_its_page(path: Path) -> None:
     document = read_file(path)
     test = on(app(document), "barrier")
-    for panel in document["panel"]:
-        run(test.selectbox(key="barrier").set_value(panel["id"]))
+    for barrier in (item for kind in BARRIER_KEYS for item in document.get(kind, ())):
+        run(test.selectbox(key="barrier").set_value(barrier["id"]))
         assert messages(test) == []
         assert "line of action" in words(test)
         run(test.toggle(key="read off").set_value(True))

@@ -118,7 +118,8 @@ def test_line_shows_heights_rated_levels_and_water_true_to_the_axis() -> None:
         assert min(heights) == pytest.approx(barrier.face.bottom, abs=0.02)
         assert max(heights) == pytest.approx(barrier.face.top, abs=0.02)
     tips = [corners(path)[1] for path in paths(drawing, fill=LIGHT.ink) if len(corners(path)) == 3]
-    rated = [barrier.record.rated_level.value for barrier in assessment.barriers if barrier.record.rated_level]
+    entered = [barrier.record.rated_level for barrier in assessment.barriers]
+    rated = [level.value for level in entered if level]
     assert [metres(drawing, y) for _, y in tips[: len(rated)]] == pytest.approx(rated, abs=0.02)
     water = {
         width: metres(drawing, corners(paths(drawing, stroke=LIGHT.water, stroke_width=width)[0])[0][1])

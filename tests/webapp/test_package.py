@@ -27,11 +27,12 @@ from tests.lines import SCENARIOS
 from webapp.answer import answer
 from webapp.display import elevation, in_unit
 from webapp.package import package_html, package_job, package_pdf
+from webapp.package.barrier import DISAGREEMENT_DIGITS
 from webapp.package.drawings import metre_on_axis, section_drawing
 from webapp.package.entered import NO_SOURCE, entry_groups
-from webapp.step_text import figure, line_text, with_unit
 from webapp.package.tables import RESULT_DIGITS
 from webapp.print_worker import PrintWorker
+from webapp.step_text import figure, line_text, with_unit
 
 FORBIDDEN = re.compile(r"\b(safe|approved|certified|guaranteed|OK)\b", re.IGNORECASE)
 
@@ -219,8 +220,8 @@ def test_a_withheld_barrier_shows_the_word_and_both_figures_and_no_result(
     said = plain(" ".join(section))
     assert "withheld" in said
     for value, kind in ((force, "force"), (moment, "moment")):
-        assert plain(with_unit(value, kind, "US")) in said
-        assert plain(with_unit(1.001 * value, kind, "US")) in said
+        assert plain(with_unit(value, kind, "US", DISAGREEMENT_DIGITS)) in said
+        assert plain(with_unit(1.001 * value, kind, "US", DISAGREEMENT_DIGITS)) in said
     assert "Workedsteps" not in said
     assert "Checks" not in said
     assert "Panel P3" in package.pages[start + 1]

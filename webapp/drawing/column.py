@@ -7,10 +7,11 @@ from dataclasses import dataclass
 from functools import cached_property
 
 from webapp.drawing.measure import text_width, wrapped
-from webapp.drawing.outlines import width_of
+from webapp.drawing.outlines import front_rings, width_of
 from webapp.drawing.reading import (
     Reading,
     bare_elevation,
+    check_words,
     head_text,
     over_top_texts,
     ratio_text,
@@ -18,10 +19,13 @@ from webapp.drawing.reading import (
 )
 from webapp.drawing.scale import Scale
 from webapp.drawing.sheet import Sheet
+from webapp.drawing.stack_shape import StackShape
 from webapp.drawing.svg import Point
 
 _MARK = 15.0
 _LEAST_DRAWN = 9.0
+_LEAST_LOG = 3.0
+_LEAST_PITCH = 6.0
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -56,8 +60,7 @@ class Column:
 
     def within(self, scale: Scale) -> bool:
         """Whether any of the barrier lies within the elevations shown."""
-        face = self.reading.face
-        return face.top > scale.low and face.bottom < scale.high
+        return self.reading.drawn_top > scale.low and self.reading.face.bottom < scale.high
 
     @cached_property
     def lines(self) -> list[tuple[str, bool]]:
@@ -67,7 +70,9 @@ class Column:
         check = reading.check
         if check is not None:
             lines.append((ratio_text(check, reading.index), True))
-            lines += [(row, False) for row in wrapped(check.name, self.room - 8, small, lines=2)]
+            lines += [
+                (row, False) for row in wrapped(check_words(reading, check), self.room - 8, small, lines=2)
+            ]
         elif reading.assessed is not None:
             lines.append(("no limit entered", False))
         first = reading.first_limit
@@ -114,7 +119,44 @@ def draw_column(sheet: Sheet, column: Column, scale: Scale) -> None:
     factor = column.drawn / max(width_of(column.rings), 1e-9)
     factor = max(factor, _LEAST_DRAWN / max(width_of(column.rings), 1e-9))
     rings = [[(column.middle + x * factor, scale.clamped(z)) for x, z in ring] for ring in column.rings]
-    sheet.verdict_shape(rings, column.reading.verdict)
+    stack = column.reading.stack
+    if stack is None:
+        sheet.verdict_shape(rings, column.reading.verdict)
+        return
+    if stack.layout.rows:
+        sheet.verdict_shape(rings, column.reading.verdict)
+    _draw_parts(sheet, column, scale, stack, factor)
+
+
+def seen_from_front(reading: Reading) -> list[list[Point]]:
+    """Outline of a barrier, (across from its middle, elevation), holes after it. [m]."""
+    stack = reading.stack
+    if stack is None:
+        return front_rings(reading.panel, reading.face)
+    return [[(x - stack.width / 2, z) for x, z in stack.outline]]
+
+
+def _draw_parts(sheet: Sheet, column: Column, scale: Scale, stack: StackShape, factor: float) -> None:
+    """Joints of the logs in place, posts and guides, and dashed the logs that are not in place."""
+    layout, left = stack.layout, column.middle - stack.width / 2 * factor
+    ink, faint = sheet.palette.ink, sheet.palette.faint
+    if layout.log_height * scale.per_metre >= _LEAST_LOG:
+        for (start, end), count in zip(stack.bays, layout.counts, strict=True):
+            for row in range(1, count):
+                y = scale.clamped(layout.sill + row * layout.log_height)
+                sheet.line([(left + start * factor, y), (left + end * factor, y)], stroke=faint, width=0.7)
+    for run in stack.runs:
+        if run.verdict is None:
+            upper, lower = scale.clamped(run.top), scale.clamped(run.bottom)
+            x0, x1 = left + run.left * factor, left + run.right * factor
+            ring = [(x0, lower), (x1, lower), (x1, upper), (x0, upper)]
+            sheet.shape([ring], fill="none", stroke=faint, width=1.2, dashes="3 3")
+    pitch = stack.width / len(stack.bays) * factor
+    for upright in (*(stack.posts if pitch >= _LEAST_PITCH else ()), *stack.guides):
+        x = left + (upright.left + upright.right) / 2 * factor
+        x = min(max(x, left), left + stack.width * factor)
+        ends = [(x, scale.clamped(upright.bottom)), (x, scale.clamped(upright.top) - 3)]
+        sheet.line(ends, stroke=ink, width=2.2)
 
 
 def draw_marks(sheet: Sheet, column: Column, scale: Scale, levels: list[float]) -> None:
@@ -122,7 +164,7 @@ def draw_marks(sheet: Sheet, column: Column, scale: Scale, levels: list[float]) 
     reading, face = column.reading, column.reading.face
     lines = [scale.y(level) for level in levels if math.isfinite(level) and scale.holds(level)]
     if not column.within(scale):
-        low, high = (bare_elevation(z, reading.system) for z in (face.bottom, face.top))
+        low, high = (bare_elevation(z, reading.system) for z in (face.bottom, reading.drawn_top))
         words = f"{low} to {high}, beyond the drawing"
         for row, text in enumerate(wrapped(words, column.room - 12, column.size - 1, lines=3)):
             y = scale.upper + 40 + row * 18
@@ -137,7 +179,7 @@ def draw_marks(sheet: Sheet, column: Column, scale: Scale, levels: list[float]) 
         _mark_label(sheet, column, scale, z=rated, x=tip - 12, lines=lines)
     if first is not None:
         start, y = column.middle + half, scale.clamped(first)
-        inner = start if first <= face.top else column.middle - half
+        inner = start if first <= reading.drawn_top else column.middle - half
         sheet.line([(inner, y), (start + 10, y)], stroke=ink, width=1.8, dashes="4 2")
         _mark_label(sheet, column, scale, z=first, x=start + 12, lines=lines)
 

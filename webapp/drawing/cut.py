@@ -10,6 +10,7 @@ from webapp.display import elevation
 from webapp.drawing.measure import shortened, spread, text_width
 from webapp.drawing.outlines import reach_across, section_line
 from webapp.drawing.reading import Reading, bare_elevation
+from webapp.drawing.stack_cut import draw_stack_cut
 from webapp.drawing.svg import Point
 from webapp.drawing.view import SIDES, View, arrow
 
@@ -43,14 +44,14 @@ def labels_of(reading: Reading, side: str, room: float, size: float) -> list[Lab
     level = reading.level(side)
     words = elevation(level, system)
     labels = [Label(z=level if math.isfinite(level) else face.bottom, words=words, water=True)]
-    for number, layer in enumerate(reading.record.layers(side), 1):
+    for number, layer in enumerate(reading.panel.layers(side), 1):
         height = bare_elevation(layer.top.value, system)
         left = room - text_width(f" {height}", size - 1)
         name = shortened(layer.name or f"sediment {number}", left, size - 1)
         labels.append(Label(z=layer.top.value, words=f"{name} {height}"))
     if side == "protected":
-        labels.append(Label(z=face.top, words=f"top {bare_elevation(face.top, system)}"))
-        labels.append(Label(z=face.bottom, words=f"bottom {bare_elevation(face.bottom, system)}"))
+        labels += [Label(z=top, words=f"{name} {bare_elevation(top, system)}") for name, top in reading.tops]
+        labels.append(Label(z=face.bottom, words=f"{reading.foot} {bare_elevation(face.bottom, system)}"))
     return sorted(labels, key=lambda label: (-label.z, not label.water))
 
 
@@ -76,9 +77,12 @@ def draw_section(view: View, margins: tuple[float, float], pad: float) -> None:
     sheet.line([(edges[0], ground), (edges[1], ground)], stroke=sheet.palette.ink, width=1.2)
     for x in range(int(edges[0]) + 6, int(edges[1]) - 2, 14):
         sheet.line([(x, ground + 1), (x - 5, ground + 7)], stroke=sheet.palette.faint, width=0.9)
-    points = _placed(view, section_line(face, face.bottom, face.top), origin)
-    withheld = view.reading.assessed is None
-    sheet.line(points, stroke=sheet.palette.ink, width=_FACE_WIDTH, dashes="8 5" if withheld else None)
+    if view.reading.stack:
+        draw_stack_cut(view, view.reading.stack, origin, edges[1])
+    else:
+        points = _placed(view, section_line(face, face.bottom, face.top), origin)
+        withheld = view.reading.assessed is None
+        sheet.line(points, stroke=sheet.palette.ink, width=_FACE_WIDTH, dashes="8 5" if withheld else None)
     _draw_resultant(view, origin)
     for side, edge, room in zip(SIDES, edges, margins, strict=True):
         _write_labels(view, side, edge, room)
@@ -109,7 +113,7 @@ def _draw_side(view: View, side: str, edge: float, origin: float) -> None:
     water = _body(view, (face.bottom, level), edge, origin)
     for fill in (tint, sheet.fill(side)) if water else ():
         sheet.shape([water], fill=fill)
-    layers = view.reading.record.layers(side)
+    layers = view.reading.panel.layers(side)
     feet = [layer.top.value for layer in layers[1:]] + [face.bottom]
     for number, (layer, foot) in enumerate(zip(layers, feet, strict=False)):
         body = _body(view, (foot, layer.top.value), edge, origin)

@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from webapp.display import show, unit_label
 from webapp.drawing.measure import shortened, text_width, wrapped
 from webapp.drawing.pressure import load_texts
-from webapp.drawing.reading import Reading, over_top_texts, ratio_text, reverse_text
+from webapp.drawing.reading import Reading, check_words, over_top_texts, ratio_text, reverse_text
 from webapp.drawing.scale import ticks
 from webapp.drawing.view import View, beyond_notes
 
@@ -37,7 +37,7 @@ def heading(view: View, form: Format) -> None:
     """Title and verdict at the head of the sheet."""
     sheet, reading, size = view.sheet, view.reading, form.size
     check = reading.check
-    about = f"{ratio_text(check, reading.index)}, {check.name}" if check is not None else ""
+    about = f"{ratio_text(check, reading.index)}, {check_words(reading, check)}" if check is not None else ""
     if reading.assessed is not None and check is None:
         about = "no limit entered"
     if form.narrow:
@@ -58,6 +58,7 @@ def heading(view: View, form: Format) -> None:
 
 
 def axis(view: View, form: Format, right: float) -> None:
+    """Draw grid and elevations from the axis to the right end."""
     sheet, scale, reading = view.sheet, view.scale, view.reading
     most = max(2, int((scale.lower - scale.upper) / 34))
     for z, label in ticks(scale, reading.system, min(most, 9)):
@@ -91,6 +92,7 @@ def load_block(view: View) -> None:
 
 
 def notes_on(view: View) -> list[str]:
+    """What is said below the views: over the top, reverse head, levels beyond the drawing."""
     reading = view.reading
     notes = [*over_top_texts(reading), reverse_text(reading), *beyond_notes(reading, view.scale)]
     return [note[:1].upper() + note[1:] for note in notes if note]

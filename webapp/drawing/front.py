@@ -12,7 +12,7 @@ def draw_front(view: View) -> list[str]:
     """Draw the true outline with the water lines across it and the centre of pressure; return captions."""
     sheet, reading, scale = view.sheet, view.reading, view.scale
     view.heading("Front")
-    rings = front_rings(reading.record, reading.face)
+    rings = front_rings(reading.panel, reading.face)
     width = width_of(rings)
     room = view.right - view.left - 20
     across = min(scale.per_metre, room / width)
@@ -28,7 +28,7 @@ def draw_front(view: View) -> list[str]:
     if reading.assessed is not None:
         acts = float(reading.assessed.resultant.line_of_action[reading.index])
         if math.isfinite(acts) and reading.face.bottom <= acts <= reading.face.top:
-            x = centre_across(reading.record, rings, reading.assessed.diagram, reading.index)
+            x = centre_across(reading.panel, rings, reading.assessed.diagram, reading.index)
             view.cross(middle + x * across, scale.y(acts))
             captions.append("cross: centre of pressure")
     return captions

@@ -8,12 +8,20 @@ from dataclasses import dataclass
 from loads.assessment import Assessment
 from loads.records.scenario import zone_name
 from webapp.display import System, elevation, unit_label
-from webapp.drawing.column import Column, draw_captions, draw_column, draw_marks, mark_room
+from webapp.drawing.column import (
+    Column,
+    draw_captions,
+    draw_column,
+    draw_marks,
+    mark_room,
+    seen_from_front,
+)
+from webapp.drawing.facts import line_facts
 from webapp.drawing.line_range import shown_range
 from webapp.drawing.measure import shortened, spread, text_width
-from webapp.drawing.outlines import front_rings, width_of
+from webapp.drawing.outlines import width_of
 from webapp.drawing.palette import Palette
-from webapp.drawing.reading import Reading, line_facts
+from webapp.drawing.reading import Reading
 from webapp.drawing.scale import Scale, ticks
 from webapp.drawing.sheet import Sheet
 
@@ -37,6 +45,7 @@ _ROW_GAP = 26
 _LABEL_GAP = 72.0
 _LEAST_DRAWN = 22.0
 _LEAST_SHARE = 0.42
+_LEAST_STACK_SHARE = 0.75
 _LINES: dict[str, tuple[float, str | None]] = {"protected": (1.8, "8 4"), "flood": (2.4, None)}
 
 
@@ -86,18 +95,20 @@ def _rows(readings: list[Reading], form: Format) -> list[list[Column]]:
     """Barriers in rows of about the same number."""
     if not readings:
         return []
-    rings = [front_rings(reading.record, reading.face) for reading in readings]
+    rings = [seen_from_front(reading) for reading in readings]
     widest = max(map(width_of, rings))
     each = math.ceil(len(readings) / math.ceil(len(readings) / form.row))
     room = (form.width - form.left - form.right) / each
     drawn = max(min(room * 0.5, room - 2 * mark_room(readings, form.size)), _LEAST_DRAWN)
+    stacks = form is WIDE and any(reading.stack for reading in readings)
+    least = _LEAST_STACK_SHARE if stacks else _LEAST_SHARE
     columns = [
         Column(
             reading=reading,
             rings=outline,
             left=form.left + position % each * room,
             room=room,
-            drawn=drawn * max(width_of(outline) / widest, _LEAST_SHARE),
+            drawn=drawn * max(width_of(outline) / widest, least),
             size=form.size,
         )
         for position, (reading, outline) in enumerate(zip(readings, rings, strict=True))

@@ -47,7 +47,7 @@ def shown_range(readings: list[Reading], levels: list[float]) -> tuple[float, fl
 
 def _barrier_range(readings: list[Reading]) -> tuple[float, float]:
     bottoms = [reading.face.bottom for reading in readings]
-    tops = [reading.face.top for reading in readings]
+    tops = [reading.drawn_top for reading in readings]
     low, high = min(bottoms), max(tops)
     height = median(top - bottom for top, bottom in zip(tops, bottoms, strict=True))
     if high - low <= _TALLEST * height:

@@ -166,7 +166,7 @@ def load_texts(view: View) -> list[str]:
             reading.show(abs(horizontal), "force"),
             f"toward {direction(horizontal)}",
             f"acts at {reading.length(acts)}",
-            f"{reading.length(abs(rise))} {'above' if rise >= 0 else 'below'} bottom",
+            f"{reading.length(abs(rise))} {'above' if rise >= 0 else 'below'} {reading.foot}",
         ]
         if not view.scale.holds(acts):
             texts.append(BEYOND)

@@ -6,14 +6,19 @@ import math
 from dataclasses import dataclass
 from functools import cached_property
 
-from loads.assessment import Assessed, Assessment, Barrier
+import numpy as np
+
+from loads.assessment import Assessed, Barrier
+from loads.check_table import Checks
 from loads.checks import SEVERITY, Check, Verdict
 from loads.faces import face_of
 from loads.first_limit import FirstLimit
 from loads.panel_checks import Face
+from loads.records.closure import Closure
 from loads.records.panel import Panel
-from loads.states import Levels
-from webapp.display import System, barrier_title, elevation, pedigree, show, significant
+from webapp.display import System, barrier_title, elevation, foot_of, show, significant
+from webapp.drawing.stack_shape import StackShape, shape_of
+from webapp.part_words import check_title
 
 RATIO_DIGITS = 3
 _NIL = 1e-9
@@ -41,9 +46,56 @@ class Reading:
     datum: str
 
     @property
-    def record(self) -> Panel:
+    def record(self) -> Panel | Closure:
         """What stands on the line."""
         return self.barrier.record
+
+    @property
+    def panel(self) -> Panel:
+        """The face that is pressed: a panel itself, or the logs of a closure."""
+        return self.barrier.setting.panel
+
+    @property
+    def closure(self) -> Closure | None:
+        """The record of a closure, None for a panel."""
+        return self.record if isinstance(self.record, Closure) else None
+
+    @property
+    def foot(self) -> str:
+        """What the bottom of the barrier is called."""
+        return foot_of(self.record.kind)
+
+    @property
+    def tops(self) -> list[tuple[str, float]]:
+        """Name and elevation of the top, of stacks that differ both ends of their range. [m]."""
+        if self.stack is None:
+            return [("top", self.face.top)]
+        layout = self.stack.layout
+        tops = dict.fromkeys((layout.highest_top, layout.lowest_top))
+        names = ("top of logs",) if len(tops) == 1 else ("highest logs", "lowest logs")
+        return [(name, top) for name, top in zip(names, tops, strict=True) if top > layout.sill]
+
+    @property
+    def crest(self) -> float:
+        """Elevation at which water goes over first. [m]."""
+        return self.stack.layout.lowest_top if self.stack else self.face.top
+
+    @cached_property
+    def verdicts(self) -> dict[str, Verdict]:
+        """Verdict of every part that is checked, by its name."""
+        return part_verdicts(self.assessed.checks, self.index) if self.assessed else {}
+
+    @cached_property
+    def stack(self) -> StackShape | None:
+        """Logs, posts and guides of a closure, None for a panel."""
+        if self.closure is None:
+            return None
+        return shape_of(self.closure, self.verdicts, "not checked" if self.assessed else "withheld")
+
+    @property
+    def drawn_top(self) -> float:
+        """Highest elevation of the barrier itself, also where no log is in place. [m]."""
+        return max(self.face.top, self.stack.top) if self.stack else self.face.top
 
     @property
     def assessed(self) -> Assessed | None:
@@ -53,7 +105,7 @@ class Reading:
     @cached_property
     def face(self) -> Face:
         """Geometry, also of a withheld barrier."""
-        return self.barrier.face if isinstance(self.barrier, Assessed) else face_of(self.record)
+        return self.barrier.face if isinstance(self.barrier, Assessed) else face_of(self.panel)
 
     @property
     def verdict(self) -> Verdict:
@@ -100,30 +152,48 @@ def bare_elevation(z: float, system: System) -> str:
     return elevation(z, system).split("\u00a0", maxsplit=1)[0]
 
 
-def pressing(checks: tuple[Check, ...], index: int) -> Check | None:
+def part_verdicts(checks: Checks, index: int) -> dict[str, Verdict]:
+    """Most pressing verdict of everything that is checked, by its name."""
+    found: dict[str, int] = {}
+    for subject, grade in zip(checks.subjects, checks.severity[index].tolist(), strict=True):
+        found[subject] = max(found.get(subject, 0), int(grade))
+    return {subject: SEVERITY[grade] for subject, grade in found.items()}
+
+
+def pressing(checks: Checks, index: int) -> Check | None:
     """Check with a limit that is most pressing in a state."""
-    limited = [check for check in checks if check.limit is not None]
-    return max(
-        limited,
-        key=lambda check: (SEVERITY.index(check.verdict(index)), float(check.ratio[index])),
-        default=None,
-    )
+    limited = np.flatnonzero(checks.limited)
+    if not limited.size:
+        return None
+    ratio = np.nan_to_num(checks.ratio[index, limited], nan=np.inf, posinf=np.inf)
+    order = np.lexsort((-limited, ratio, checks.severity[index, limited]))
+    return checks[int(limited[order[-1]])]
 
 
 def ratio_text(check: Check, index: int) -> str:
     """Ratio of a check in words."""
     ratio = float(check.ratio[index])
-    return f"{significant(ratio, RATIO_DIGITS)} of limit" if math.isfinite(ratio) else "no head allowed"
+    nothing = "no head allowed" if check.kind == "elevation" else "none allowed"
+    return f"{significant(ratio, RATIO_DIGITS)} of limit" if math.isfinite(ratio) else nothing
 
 
 def over_top_texts(reading: Reading) -> list[str]:
     """What is said of water that stands over the top."""
     texts = []
     for side, prefix in (("flood", ""), ("protected", "protected side ")):
-        over = reading.level(side) - reading.face.top
+        over = reading.level(side) - reading.crest
         if over > _NIL:
-            texts.append(f"{prefix}over the top by {reading.length(over)}")
+            texts.append(f"{prefix}{_over_what(reading)} by {reading.length(over)}")
     return texts
+
+
+def _over_what(reading: Reading) -> str:
+    if reading.stack is None:
+        return "over the top"
+    layout = reading.stack.layout
+    if layout.lowest_top <= layout.sill:
+        return "over the open sill"
+    return "over the logs" if layout.lowest_top == layout.highest_top else "over the lowest logs"
 
 
 def reverse_text(reading: Reading) -> str:
@@ -152,124 +222,6 @@ def inclined(horizontal: float, vertical: float) -> bool:
     return abs(vertical) > _NIL * abs(horizontal)
 
 
-def _capital(text: str) -> str:
-    return text[:1].upper() + text[1:]
-
-
-def facts(barrier: Barrier, *, index: int = 0, system: System, datum: str) -> tuple[str, ...]:
-    """What the drawing of a barrier says, as sentences.
-
-    Parameters
-    ----------
-    barrier
-        Assessed or withheld.
-    index
-        The state.
-    system, datum
-        Units, and datum of the elevations.
-    """
-    reading = Reading(barrier, index, system, datum)
-    sentences = [f"{reading.title}: {reading.verdict}"]
-    sentences += [_level_fact(reading, side) for side in ("flood", "protected")]
-    sentences += [_capital(text) for text in (*over_top_texts(reading), reverse_text(reading)) if text]
-    sentences += _load_facts(reading) + _limit_facts(reading)
-    return tuple(f"{sentence}." for sentence in sentences)
-
-
-def _level_fact(reading: Reading, side: str) -> str:
-    level, bottom = reading.level(side), reading.face.bottom
-    if not math.isfinite(level):
-        return f"{_capital(side)} side dry"
-    head = f"{reading.length(level - bottom)} above" if level > bottom else "not above"
-    place = f"{head} the bottom at {reading.elevation(bottom)}"
-    return f"{_capital(side)} side at {reading.elevation(level)}, {place}"
-
-
-def _load_facts(reading: Reading) -> list[str]:
-    if reading.assessed is None:
-        return ["The two computations of its load disagree, so force and moment are withheld"]
-    resultant, index = reading.assessed.resultant, reading.index
-    horizontal, vertical = float(resultant.horizontal[index]), float(resultant.vertical[index])
-    moment, acts = float(resultant.moment[index]), float(resultant.line_of_action[index])
-    if math.isnan(acts):
-        first = "No net horizontal force"
-    else:
-        rise = acts - reading.face.bottom
-        place = f"{reading.length(abs(rise))} {'above' if rise >= 0 else 'below'} the bottom"
-        kind = "horizontal force" if inclined(horizontal, vertical) else "force"
-        first = (
-            f"Net {kind} {reading.show(abs(horizontal), 'force')} toward the {direction(horizontal)}, "
-            f"acting at {reading.elevation(acts)}, {place}"
-        )
-    said = [first]
-    if inclined(horizontal, vertical):
-        said.append(
-            f"Vertical force {reading.show(abs(vertical), 'force')} {'up' if vertical > 0 else 'down'}"
-        )
-    if abs(moment) > _NIL:
-        said.append(
-            f"Moment about the bottom {reading.show(abs(moment), 'moment')}, turning the top toward the "
-            f"{direction(moment)}"
-        )
-    return said
-
-
-def _limit_facts(reading: Reading) -> list[str]:
-    said = []
-    check = reading.check
-    if check is not None:
-        said.append(
-            f"Most pressing: {check.name}, {ratio_text(check, reading.index)} (set by: {check.source})"
-        )
-    elif reading.assessed is not None:
-        said.append("No limit entered")
-    rated = reading.record.rated_level
-    if rated is not None:
-        said.append(f"Rated level {reading.elevation(rated.value)} ({pedigree(rated)})")
-    first = reading.first_limit
-    if first is not None:
-        said.append(_first_limit_fact(reading, first))
-    return said
-
-
-def _first_limit_fact(reading: Reading, first: FirstLimit) -> str:
-    if first.level is None:
-        return f"No load limit is reached up to {reading.elevation(first.ceiling)}"
-    if first.without_water:
-        return f"The limit of {first.check} is reached without water on the flood side"
-    return f"First-limit level {reading.elevation(first.level)} by {first.check}, a computed screening figure"
-
-
-def level_text(levels: Levels, index: int, side: str, system: System, datum: str) -> str:
-    """Level of one side in words."""
-    level = float(levels.of(side)[index])
-    return f"{side} side {elevation(level, system, datum)}" if math.isfinite(level) else f"{side} side dry"
-
-
-def line_facts(assessment: Assessment, *, index: int = 0, system: System) -> tuple[str, ...]:
-    """What the drawing of a flood line says, as sentences.
-
-    Parameters
-    ----------
-    assessment
-        All barriers.
-    index
-        The state.
-    system
-        Units.
-    """
-    datum = assessment.scenario.datum
-    sentences = [
-        f"{_capital(level_text(assessment.levels, index, side, system, datum))}."
-        for side in ("flood", "protected")
-    ]
-    for barrier in assessment.barriers:
-        reading = Reading(barrier, index, system, datum)
-        parts = [f"{reading.title}: {reading.verdict}"]
-        check = reading.check
-        if check is not None:
-            parts.append(f"{ratio_text(check, index)}, {check.name}")
-        parts += [head_text(reading), *over_top_texts(reading)]
-        parts += [reverse_text(reading)] if reverse_text(reading) else []
-        sentences.append("; ".join(parts) + ".")
-    return tuple(sentences)
+def check_words(reading: Reading, check: Check) -> str:
+    """Check with the part it is about, for example "post 2 moment"; of a whole barrier its name alone."""
+    return check_title(check, reading.record.kind)

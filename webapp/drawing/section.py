@@ -3,21 +3,21 @@
 from __future__ import annotations
 
 import math
-from dataclasses import dataclass, replace
+from dataclasses import replace
 
 from loads.assessment import Barrier
 from webapp.display import System
-from webapp.drawing.cut import draw_section, margin_of
+from webapp.drawing.closure import closure_drawing
+from webapp.drawing.cut import draw_section
+from webapp.drawing.facts import facts
 from webapp.drawing.frame import HEAD, LINE, TEXT_ROOM, Format, agreement, axis, heading, load_block, notes_on
 from webapp.drawing.front import draw_front
 from webapp.drawing.measure import wrapped
-from webapp.drawing.outlines import reach_across
 from webapp.drawing.palette import Palette
 from webapp.drawing.pressure import draw_pressure, load_texts
-from webapp.drawing.reading import Reading, facts
-from webapp.drawing.scale import Scale
+from webapp.drawing.reading import Reading
+from webapp.drawing.section_layout import lay_out_section
 from webapp.drawing.sheet import Sheet
-from webapp.drawing.view import SIDES, View
 
 WIDE = Format(
     width=1080, axis=56, plot=330, least_plot=170, section=(252, 700), margin=150, pad=(44, 100), size=13
@@ -34,8 +34,6 @@ NARROW = Format(
     narrow=True,
 )
 _FRONT = (70.0, 236.0)
-_LEVEL_REACH = 0.55
-_LEAST_ACROSS = 40.0
 
 
 def barrier_drawing(
@@ -67,62 +65,14 @@ def barrier_drawing(
     said = facts(barrier, index=index, system=system, datum=datum)
     kind = f"barrier {'narrow' if narrow else 'wide'} {index}"
     sheet = Sheet(palette, f"{reading.title} in section and net pressure", said, kind)
+    if reading.stack:
+        return closure_drawing(sheet, reading, reading.stack, narrow=narrow)
     return _narrow(sheet, reading) if narrow else _wide(sheet, reading)
-
-
-def scale_of(reading: Reading, form: Format, upper: float, across: float) -> Scale:
-    """Elevation axis: the face and the levels near it, at a scale that is the same up and across.
-
-    Parameters
-    ----------
-    reading, form
-        What is drawn, and how large.
-    upper
-        Upper end of the axis. [px]
-    across
-        Room for the face in section. [px]
-    """
-    face = reading.face
-    least, most = reach_across(face)
-    body = max(face.top - face.bottom, 0.35 * (most - least))
-    levels = [reading.level(side) for side in SIDES]
-    levels += [layer.top.value for side in SIDES for layer in reading.record.layers(side)]
-    reach = _LEVEL_REACH * body
-    near = [z for z in levels if face.bottom - reach <= z <= face.top + reach]
-    low, high = min([face.bottom, *near]), max([face.top, *near])
-    low, high = low - 0.1 * body, high + 0.06 * body
-    per_metre = min(form.plot / (high - low), across / max(most - least, 1e-9))
-    lacking = max(form.least_plot / per_metre - (high - low), 0.0)
-    low, high = low - lacking / 2, high + lacking / 2
-    return Scale(low=low, high=high, lower=upper + (high - low) * per_metre, upper=upper)
-
-
-@dataclass(frozen=True, kw_only=True)
-class Section:
-    """The section view, the margins for its labels, and the water shown beside the face. [px]."""
-
-    view: View
-    margins: tuple[float, float]
-    pad: float
-
-
-def _section(sheet: Sheet, reading: Reading, form: Format, upper: float) -> Section:
-    """Lay out the section, whose labels, water and face share a given width."""
-    flood, protected = (margin_of(reading, side, form.margin, form.size) for side in SIDES)
-    left, right = form.section
-    room = right - left - (flood + protected)
-    scale = scale_of(reading, form, upper, max(room - 2 * form.pad[0], _LEAST_ACROSS))
-    least, most = reach_across(reading.face)
-    pad = min(max((room - (most - least) * scale.per_metre) / 2, form.pad[0]), form.pad[1])
-    width = (flood + protected) + 2 * pad + (most - least) * scale.per_metre
-    start = left + max((right - left - width) / 2, 0.0)
-    view = View(sheet=sheet, reading=reading, scale=scale, left=start, right=start + width, size=form.size)
-    return Section(view=view, margins=(flood, protected), pad=pad)
 
 
 def _wide(sheet: Sheet, reading: Reading) -> str:
     form = WIDE
-    section = _section(sheet, reading, form, HEAD)
+    section = lay_out_section(sheet, reading, form, HEAD)
     view, scale = section.view, section.view.scale
     heading(view, form)
     axis(view, form, form.width - 12)
@@ -149,7 +99,7 @@ def _wide(sheet: Sheet, reading: Reading) -> str:
 
 def _narrow(sheet: Sheet, reading: Reading) -> str:
     form = NARROW
-    section = _section(sheet, reading, form, HEAD + 34)
+    section = lay_out_section(sheet, reading, form, HEAD + 34)
     view, scale = section.view, section.view.scale
     heading(view, form)
     axis(view, form, form.width - 6)

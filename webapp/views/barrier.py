@@ -2,22 +2,20 @@ from functools import partial
 
 import streamlit as st
 
-from loads.assessment import Assessed, assess
+from loads.assessment import Assessed, AssessedClosure, assess
 from loads.working import working
-from webapp import barrier_markup, figures, markup, parts, state, working_markup
-from webapp.display import barrier_title
+from webapp import barrier_markup, closure_markup, figures, limit_markup, markup, parts, state, working_markup
 from webapp.drawing.section import barrier_drawing
-from webapp.whatif import neighbours
+from webapp.whatif import ONE_MORE, neighbours
 
 system, palette = parts.system(), parts.palette()
 scenario = state.scenario(st.session_state)
 around = neighbours(scenario, system)
 assessment = assess(scenario, around.levels)
+more = ONE_MORE[system][1]
 
 parts.heading(assessment)
-names = {panel.id: barrier_title(panel.id, panel.name) for panel in scenario.panel}
-state.keep_choice(st.session_state, "barrier", list(names))
-st.selectbox("Barrier", list(names), key="barrier", format_func=names.__getitem__, persist_state="session")
+parts.barrier_choice(st.session_state["document"])
 parts.level_band()
 barrier = assessment.barrier(st.session_state["barrier"])
 
@@ -26,23 +24,32 @@ if not isinstance(barrier, Assessed):
 else:
     drawing = partial(barrier_drawing, barrier, system=system, palette=palette, datum=scenario.datum)
     picture = markup.drawings(drawing(), drawing(narrow=True))
+    headline = barrier_markup.headline(barrier, system) + limit_markup.first_row(barrier, system, more)
     st.markdown(
-        markup.block(barrier_markup.headline(barrier, system) + picture + markup.remark_list([barrier])),
+        markup.block(headline + picture + markup.remark_list([barrier])),
         unsafe_allow_html=True,
     )
     parts.caution()
-    st.markdown(
-        markup.block(
-            markup.subheading("Checks")
-            + markup.check_table(barrier.checks, system)
-            + barrier_markup.levels_note(barrier, system)
-            + markup.subheading("If the water stands otherwise")
-            + barrier_markup.states_table(barrier, around.labels, system)
-            + markup.subheading("What pushes")
-            + barrier_markup.load_table(barrier, system)
-        ),
-        unsafe_allow_html=True,
+    checks = (
+        closure_markup.checks_table(barrier, system, more)
+        if isinstance(barrier, AssessedClosure)
+        else limit_markup.check_table(barrier.checks, system, more)
     )
+    content = (
+        markup.subheading("Checks")
+        + checks
+        + barrier_markup.levels_note(barrier, system)
+        + limit_markup.first_part(barrier, system, more)
+    )
+    if isinstance(barrier, AssessedClosure):
+        content += closure_markup.parts_part(barrier, system, more)
+    content += (
+        markup.subheading("If the water stands otherwise")
+        + barrier_markup.states_table(barrier, around.labels, system)
+        + markup.subheading("What pushes")
+        + barrier_markup.load_table(barrier, system)
+    )
+    st.markdown(markup.block(content), unsafe_allow_html=True)
     if st.toggle("Read the pressure at any elevation", key="read off"):
         figure = figures.pressure_figure(barrier, system)
         st.plotly_chart(figure, alt=figures.pressure_text(barrier, system), config={"displaylogo": False})

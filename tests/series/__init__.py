@@ -1,0 +1,1 @@
+"""Tests of stage and level series: readers, traps, ages, interpolation."""

@@ -1,0 +1,84 @@
+"""The texts of a field sheet as blocks under each other, to tell how large they may be set."""
+
+from __future__ import annotations
+
+from typing import Any
+
+from webapp.sheet.fit import CODE, LABEL, PICTURE, Block
+
+Parts = dict[str, Any]
+
+_STAMP_ROOM, _STAMP_HEIGHT = 62.0, 11.0
+_BOX_INSET, _FIGURE = 6.0, 2.1
+_SMALL, _META, _FOOT = 0.92, 0.88, 0.8
+_TIMES = 10.5
+_TICK, _TICK_HEAD = 1.36, 1.1
+_ALARM = 1.3
+_GUTTER = 4.0
+
+
+def blocks(parts: Parts, width: float, title_scale: float) -> list[Block]:
+    """Blocks of a sheet from head to foot.
+
+    Parameters
+    ----------
+    parts
+        Texts by the names that the template knows.
+    width
+        Between the margins. [mm]
+    title_scale
+        Size of the heading over that of the type.
+    """
+    column = width - LABEL - 1
+    wide = [parts["where"], parts["remove"], [parts["short"]], [_sentence(*pair) for pair in parts["watch"]]]
+    wide += [[parts["remarks"]]] if parts["remarks"] else []
+    middle = _withheld_blocks(parts, width) if parts["withheld"] else _computed_blocks(parts, width, column)
+    return [
+        Block(
+            texts=(parts["title"],), width=width - _STAMP_ROOM, scale=title_scale * 1.1, least=_STAMP_HEIGHT
+        ),
+        Block(texts=(parts["scenario_title"] + " " * 60, "issued"), width=width, scale=_META),
+        *middle,
+        Block(texts=(), width=width, least=_TIMES),
+        *(Block(texts=tuple(texts), width=column) for texts in wide),
+        _tick_block(parts, width),
+        Block(texts=(parts["caution"],), width=width, scale=1.08),
+        Block(texts=("stamp", *([parts["notice"]] if parts["notice"] else [])), width=width, scale=_FOOT),
+    ]
+
+
+def _sentence(sign: str, words: str) -> str:
+    return f"{sign}: {words}."
+
+
+def _withheld_blocks(parts: Parts, width: float) -> list[Block]:
+    return [Block(texts=tuple(parts["withheld"]), width=width - _BOX_INSET, extra=5.0)]
+
+
+def _computed_blocks(parts: Parts, width: float, column: float) -> list[Block]:
+    return [
+        max((_box_block(box, width / 3 - _BOX_INSET) for box in parts["boxes"]), key=lambda b: b.height(12)),
+        Block(texts=tuple(parts["water"]), width=column),
+        Block(
+            texts=tuple(text for text, _ in parts["build"]),
+            width=column - PICTURE[0] - _GUTTER,
+            scale=1.04,
+            least=PICTURE[1],
+        ),
+        Block(texts=tuple(parts["limit"]), width=column, scale=1.04),
+        Block(texts=("headings", *("row" for _ in parts["loads"].rows), *parts["load_notes"]), width=column),
+    ]
+
+
+def _box_block(box: Any, width: float) -> Block:
+    return Block(
+        texts=(box.label, *box.lines), width=width, scale=_SMALL, extra=_FIGURE + (_ALARM if box.alarm else 0)
+    )
+
+
+def _tick_block(parts: Parts, width: float) -> Block:
+    rows = max(len(half) for half in parts["ticks"])
+    shown = parts["code_picture"] is not None
+    return Block(
+        texts=(), width=width, least=CODE + 5 if shown else 0.0, extra=_TICK_HEAD + rows * _TICK
+    )

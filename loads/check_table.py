@@ -120,6 +120,10 @@ def table_of(
 Entries: TypeAlias = Sequence[Check | CheckTable]
 
 
+def _grades_below(entry: Check | CheckTable) -> bool:
+    return entry.grades_below if isinstance(entry, Check) else True
+
+
 class Checks(Built[Check]):
     """All checks of a barrier, the most pressing of the first state first.
 
@@ -132,9 +136,10 @@ class Checks(Built[Check]):
     def __init__(self, entries: Entries) -> None:
         columns = [entry.ratio if entry.ratio.ndim == 2 else entry.ratio[:, None] for entry in entries]
         ratio: FloatArray = np.concatenate(columns, axis=1) if columns else np.zeros((1, 0))
-        pressing = np.where(np.isnan(ratio[0]), -1.0, ratio[0])
-        order = np.argsort(-pressing, kind="stable")
         counts = [column.shape[1] for column in columns]
+        graded = np.repeat([_grades_below(entry) for entry in entries], counts).astype(bool)
+        counting = ~np.isnan(ratio[0]) & (graded | ~(ratio[0] <= 1 + ROUNDING))
+        order = np.argsort(-np.where(counting, ratio[0], -1.0), kind="stable")
         self._entries = entries
         self._entry = np.repeat(np.arange(len(counts)), counts)[order]
         self._column = np.concatenate([np.arange(count) for count in (*counts, 0)])[order]
@@ -165,7 +170,9 @@ class Checks(Built[Check]):
         near = np.array([entry.near for entry in self._entries] or [1.0])[self._entry]
         # so worded that what is no number is never below
         above = ~(self.ratio <= 1 + ROUNDING)
-        graded = np.where(above, 3.0, np.where(self.ratio >= near - ROUNDING, 2.0, 1.0))
+        under = np.where(self.ratio >= near - ROUNDING, 2.0, 1.0)
+        under *= np.array([_grades_below(entry) for entry in self._entries], dtype=bool)[self._entry]
+        graded = np.where(above, 3.0, under)
         return np.where(self.limited, graded, 0.0)
 
     @cached_property

@@ -47,6 +47,9 @@ class Check:
         What whoever reads the ratio must know.
     rises_with_water
         True when the check has a first-limit level; False for checks of a level itself.
+    grades_below
+        False for a bound that nobody entered, a fact of the build: passing it counts, staying under it says
+        nothing.
     """
 
     subject: str
@@ -60,6 +63,7 @@ class Check:
     source: str
     remarks: tuple[str, ...] = ()
     rises_with_water: bool = True
+    grades_below: bool = True
 
     def verdict(self, index: int = 0) -> Verdict:
         """Verdict of one state."""
@@ -68,6 +72,8 @@ class Check:
         ratio = float(self.ratio[index])
         if not ratio <= 1 + ROUNDING:  # so worded that what is no number is never below
             return "above limit"
+        if not self.grades_below:
+            return "not checked"
         return "near limit" if ratio >= self.near - ROUNDING else "below limit"
 
 
@@ -126,6 +132,7 @@ def level_check(
     highest: float,
     near: float,
     remarks: tuple[str, ...] = (),
+    grades_below: bool = True,
 ) -> Check:
     """Hold a water level against the highest one that somebody allowed; the ratio is that of heads.
 
@@ -139,6 +146,8 @@ def level_check(
         What was entered, or None.
     highest
         Elevation it amounts to; NaN without a limit. [m]
+    grades_below
+        As in `Check`.
     """
     head = np.maximum(level - bottom, 0.0)
     allowed = highest - bottom
@@ -160,6 +169,7 @@ def level_check(
         source=source_text(limit),
         remarks=remarks,
         rises_with_water=False,
+        grades_below=grades_below,
     )
 
 

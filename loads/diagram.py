@@ -158,7 +158,9 @@ class Diagram:
         total = np.zeros((self.states, points.shape[1]))
         for k in range(self.knot.shape[1]):
             depth = np.maximum(self.knot[:, k, None] - points, 0)
-            power = depth if order == 1 else depth**order
+            power = depth
+            for _ in range(order - 1):
+                power = power * depth
             ramp = (self.slope[:, k, None] / factorial(order + 1)) * depth
             total += power * (self.step[:, k, None] / factorial(order) + ramp)
         return total

@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import math
-from dataclasses import dataclass
 
 from loads.density import (
     FRESH_WATER_TEMPERATURE,
@@ -15,42 +14,11 @@ from loads.earth_pressure import FRICTION_ANGLE, OVERCONSOLIDATION_RATIO
 from loads.earth_pressure_coulomb import ACTIVE_WALL_FRICTION_SHARE, PASSIVE_WALL_FRICTION_SHARE
 from loads.first_limit import RESOLUTION
 from loads.limits_of_use import LimitOfUse
+from loads.method_clock import CLOCK
+from loads.method_data import Method, MethodGroup
 from loads.recheck import FITTED_TOLERANCE, STRAIGHT_TOLERANCE
 
 _ICE_POINT = 273.15
-
-
-@dataclass(frozen=True, kw_only=True)
-class Method:
-    """One formula.
-
-    Attributes
-    ----------
-    name
-        What it gives.
-    formula
-        In symbols.
-    words
-        What the symbols are and how it is used here.
-    sources
-        Keys of `loads.references.REFERENCES`; empty for plain statics and definitions.
-    limits
-        Range within which it is used.
-    """
-
-    name: str
-    formula: str
-    words: str
-    sources: tuple[str, ...] = ()
-    limits: str = ""
-
-
-@dataclass(frozen=True, kw_only=True)
-class MethodGroup:
-    """Formulas that belong together."""
-
-    title: str
-    methods: tuple[Method, ...]
 
 
 def limit_words(limit: LimitOfUse) -> str:
@@ -294,5 +262,5 @@ _CHECKS = MethodGroup(
     ),
 )
 
-METHODS: tuple[MethodGroup, ...] = (_WATER, _SEDIMENT, _FORCES, _CHECKS)
+METHODS: tuple[MethodGroup, ...] = (_WATER, _SEDIMENT, _FORCES, _CHECKS, CLOCK)
 """Every formula, by group."""

@@ -7,6 +7,8 @@ from zoneinfo import ZoneInfo
 
 import numpy as np
 
+from loads.problems import Problem, ScenarioError
+
 _DAYS = ("Mon", "Tue", "Wed", "Thu", "Fri", "Sat", "Sun")
 _MONTHS = ("Jan", "Feb", "Mar", "Apr", "May", "Jun", "Jul", "Aug", "Sep", "Oct", "Nov", "Dec")
 
@@ -79,3 +81,29 @@ def duration_text(span: timedelta) -> str:
     if not hours:
         return f"{rest} min"
     return f"{hours} h {rest} min" if rest else f"{hours} h"
+
+
+def now_of(typed: str | None, path: str) -> datetime:
+    """A time to tell from, as typed, or this machine's when nothing is typed.
+
+    Raises
+    ------
+    ScenarioError
+        It is no date and time, or has no zone.
+
+    Examples
+    --------
+    >>> now_of("2031-04-02T09:10:00-05:00", "now").isoformat()
+    '2031-04-02T14:10:00+00:00'
+    """
+    if typed is None or not typed.strip():
+        return datetime.now(UTC)
+    example = "2031-04-02T06:00:00-05:00"
+    try:
+        moment = datetime.fromisoformat(typed.strip())
+        if moment.utcoffset() is not None:
+            return moment.astimezone(UTC)
+        rule = f"it needs a time zone, for example {example}"
+    except (ValueError, OverflowError):
+        rule = f"it must be a date and time with a zone, for example {example}"
+    raise ScenarioError([Problem(path=path, value=f'"{typed.strip()[:40]}"', rule=rule)])

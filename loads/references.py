@@ -215,6 +215,14 @@ _TEXTBOOKS = (
 
 _PRACTICE = (
     Reference(
+        key="ClockPractice",
+        citation="Reading plus gauge zero plus datum shift plus difference to the closure less sill is the "
+        "head; call-out, start and closed-by worked back from the water by the times of installing, travel "
+        "and mobilisation; a closure's worked example by hand",
+        edition="none",
+        status="common practice, no source",
+    ),
+    Reference(
         key="HeadTable",
         citation="Table of pressure γh, force γh²/2 and moment γh³/6 of a head of fresh water, "
         "62.4 lb/ft³, on a "

@@ -123,12 +123,17 @@ def _id_problems(document: Mapping[str, Any]) -> list[Problem]:
     if not barriers:
         rule = "has no barrier; add at least one, under [[panel]] or [[closure]]"
         return [Problem(path="the scenario", value="", rule=rule)]
-    counts = Counter(item["id"] for item in barriers if isinstance(item.get("id"), str))
+    readings = _listed(document.get("reading"))
+    return _used_twice(barriers, "barrier") + _used_twice(readings, "reading")
+
+
+def _used_twice(records: Sequence[Mapping[str, Any]], what: str) -> list[Problem]:
+    counts = Counter(item["id"] for item in records if isinstance(item.get("id"), str))
     return [
         Problem(
             path="id",
             value=_shown(name),
-            rule=f"it is used {count} times; every barrier needs an id of its own",
+            rule=f"it is used {count} times; every {what} needs an id of its own",
         )
         for name, count in counts.items()
         if count > 1

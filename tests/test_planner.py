@@ -167,6 +167,13 @@ def test_start_times_calls_and_margins_of_one_crew() -> None:
     assert plan.sentences == ()
 
 
+def test_the_latest_start_leaves_time_for_what_follows() -> None:
+    """Both due in 9 h, 2 h each and 15 min between: the second must start by 7 h, the first by 4 h 45 min."""
+    crews = [crew("A", move="15 min")]
+    first, second = plan_line(crews, [job("C1", at(9), crews), job("C2", at(9), crews)], NOW).crews[0].jobs
+    assert (first.start_by, second.start_by) == (NOW + timedelta(hours=4.75), NOW + timedelta(hours=7))
+
+
 def test_what_needs_a_lift_goes_to_a_crew_with_a_lift() -> None:
     crews = [crew("A"), crew("B", can=["lift"], start="2031-04-02T16:00:00+00:00")]
     plan = plan_line(crews, [job("C1", at(9), crews, needs=["lift"]), job("C2", at(9), crews)], NOW)

@@ -18,6 +18,7 @@ from loads.units import SI_UNITS
 from loads.working import Step, Term, working
 from webapp.answer_closure import closure_answer
 from webapp.answer_parts import check_answer, first_limit_answer, number, part_answer
+from webapp.reading_levels import readings_answer
 
 SCHEMA = "sillhead/1"
 
@@ -87,6 +88,7 @@ def answer(assessment: Assessment, document: Mapping[str, object], index: int = 
             for side, fluid in assessment.fluids.items()
         },
         "barriers": [_barrier(barrier, index) for barrier in assessment.barriers],
+        **readings_answer(assessment.scenario),
         "cautions": list(CAUTIONS),
     }
 

@@ -1,5 +1,6 @@
 """The command line. Exit status 0 when computed, 2 for bad input with the messages on standard error."""
 
+import datetime as dt
 import ipaddress
 import json
 import os
@@ -7,6 +8,7 @@ import sys
 from collections.abc import Iterator
 from contextlib import contextmanager
 from pathlib import Path
+from typing import Any
 
 import click
 
@@ -84,6 +86,57 @@ def report(file: Path, output: Path) -> None:
     click.echo(f"{output} written")
 
 
+@main.command()
+@click.argument("file", type=click.Path(path_type=Path))
+@click.argument("barrier_id", metavar="ID")
+@click.option(
+    "-o",
+    "--output",
+    type=click.Path(dir_okay=False, path_type=Path),
+    required=True,
+    help="File to write, .pdf or .html; one of that name is replaced.",
+)
+@click.option(
+    "--stamp",
+    type=click.Choice(["actual", "exercise", "draft"]),
+    default="draft",
+    show_default=True,
+    help="What the sheet is for; it is printed large.",
+)
+@click.option("--paper", type=click.Choice(["letter", "A4"]), help="By the units of the file when left out.")
+@click.option(
+    "--link-base", metavar="URL", help="Address of a server; the sheet then carries a link as QR code."
+)
+def sheet(
+    file: Path, barrier_id: str, *, output: Path, stamp: str, paper: str | None, link_base: str | None
+) -> None:
+    """Write the field sheet of a closure, one page."""
+    from loads.assessment import assess  # noqa: PLC0415  keeps --help quick
+    from loads.scenario_file import read_file, scenario_of  # noqa: PLC0415
+    from webapp.pdf import render  # noqa: PLC0415
+    from webapp.sheet import sheet_html, sheet_job  # noqa: PLC0415
+    from webapp.sheet.link import link_at  # noqa: PLC0415
+
+    with _messages():
+        if output.suffix not in (".pdf", ".html"):
+            raise SillheadError(f"the file {output} must end in .pdf or .html")
+        document = read_file(file)
+        assessment = assess(scenario_of(document))
+        link = link_at(link_base, document) if link_base else None
+        options: dict[str, Any] = {
+            "stamp": stamp,
+            "paper": paper,
+            "link": link,
+            "now": dt.datetime.now(dt.UTC),
+        }
+        if output.suffix == ".pdf":
+            content = render(sheet_job(assessment, barrier_id, document, **options))
+        else:
+            content = sheet_html(assessment, barrier_id, document, **options).encode()
+        _write_whole(output, content)
+    click.echo(f"{output} written")
+
+
 def _write_whole(output: Path, content: bytes) -> None:
     """Write a file so that it is either there as a whole or as it was before."""
     unfinished = output.with_name(f".{output.name}.{os.getpid()}")
@@ -95,6 +148,29 @@ def _write_whole(output: Path, content: bytes) -> None:
             unfinished.unlink(missing_ok=True)
     except OSError as error:
         raise SillheadError(f"the file {output} cannot be written: {error.strerror or error}") from error
+
+
+@main.command()
+@click.argument("file", type=click.Path(path_type=Path))
+@click.option(
+    "--now", "typed_now", metavar="TIME", help="Time with its zone to tell from; this machine's if left out."
+)
+@click.option("--json", "as_json", is_flag=True, help="Print JSON in SI base units instead of a table.")
+def clock(file: Path, *, typed_now: str | None, as_json: bool) -> None:
+    """Tell when to call out, start and have closed, from the forecast in a scenario file."""
+    from loads.line_clock import line_clock  # noqa: PLC0415  keeps --help quick
+    from loads.moments import now_of  # noqa: PLC0415
+    from loads.scenario_file import read_file, scenario_of  # noqa: PLC0415
+    from webapp.answer_clock import clock_answer  # noqa: PLC0415
+    from webapp.clock_words import clock_text  # noqa: PLC0415
+
+    with _messages():
+        document = read_file(file)
+        line = line_clock(scenario_of(document), now_of(typed_now, "--now"))
+    if as_json:
+        click.echo(json.dumps(clock_answer(line, document), ensure_ascii=False, allow_nan=False, indent=1))
+    else:
+        click.echo(clock_text(line, document))
 
 
 @main.command()

@@ -8,6 +8,7 @@ from loads.records.base import Record
 from loads.records.closure import Closure
 from loads.records.closure_parts import Anchor, Brace, Log, Post
 from loads.records.closure_site import Adding, Guide, Handling, HoldDown, Install, Niosh, Seal
+from loads.records.crew import BarrierClock
 from loads.records.member import LogLimits, LogSection, PostLimits, PostSection
 from loads.records.panel import Limits
 
@@ -110,6 +111,24 @@ CLOSURE_FORM = (
         title="Lifting equation",
         path=("handling", "niosh"),
         record=Niosh,
+    ),
+    FormPart(
+        section="Clock",
+        title="",
+        path=("clock",),
+        record=BarrierClock,
+        names=(
+            "install_time",
+            "install_people",
+            "preparation",
+            "wave_allowance",
+            "removal_stage",
+            "owner",
+            "tell_owner_ahead",
+            "needs",
+            "crew",
+            "order",
+        ),
     ),
 )
 """The form, in order; parts of one section stand together."""

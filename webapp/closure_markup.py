@@ -9,8 +9,9 @@ from loads.assessment import Assessed, AssessedClosure
 from loads.checks import Verdict
 from loads.part import Part
 from webapp.check_groups import PartRatios, check_groups
-from webapp.display import System, elevation, show, show_all, significant
+from webapp.display import NO_BREAK, System, elevation, show, show_all, significant
 from webapp.limit_markup import limit_cell
+from webapp.loss_markup import loss_part
 from webapp.markup import escaped, ratio_cell, subheading, table, verdict_mark
 from webapp.part_words import bay_groups, numbered, parts_text
 
@@ -42,31 +43,35 @@ def _between(counts: set[int]) -> str:
 
 
 def checks_table(barrier: Assessed, system: System, more: str) -> str:
-    """Most pressing check of each kind, with what one more foot makes of it."""
-    rows = []
+    """Most pressing check of each kind, with what one more foot makes of it, and the notes to them."""
+    rows, notes = [], []
     for group in check_groups(barrier):
         check = group.check
         parts = group.parts if not check.subject.startswith("closure") else "closure"
-        others = f" and {group.others} more, less pressed" if group.others else ""
+        others = f"<br><small>and {group.others} more, less pressed</small>" if group.others else ""
+        words = ". ".join(text.rstrip(".") for text in (check.source, *check.remarks)) + "."
+        if words not in notes:
+            notes.append(words)
         rows.append(
             [
-                f"{escaped(parts)}<small>{others}</small>",
+                f"{escaped(parts)}{others}",
                 escaped(check.name),
                 verdict_mark(check.verdict()),
-                _shown(float(check.demand[0]), check.kind, check.name, system),
+                _demand(float(check.demand[0]), check.kind, check.name, system),
                 limit_cell(check, system),
                 ratio_cell(check, 0),
                 ratio_cell(check, 1),
-                escaped(" ".join((check.source, *check.remarks))),
+                str(notes.index(words) + 1),
             ]
         )
-    headings = ("part", "check", "verdict", "demand", "limit", "of limit", more, "source")
-    return table(headings, rows, numeric={3, 4, 5, 6})
+    headings = ("part", "check", "verdict", "demand", "limit", "of limit", more, "note")
+    listed = "".join(f"<li>{escaped(words[:1].upper() + words[1:])}</li>" for words in notes)
+    return table(headings, rows, numeric={3, 4, 5, 6, 7}) + f'<ol class="sh-notes">{listed}</ol>'
 
 
-def _shown(value: float, kind: str, name: str, system: System) -> str:
+def _demand(value: float, kind: str, name: str, system: System) -> str:
     if kind == "number":
-        return significant(value, 3)
+        return f"{value:g}"
     return show(value, "deflection" if "deflection" in name else kind, system)
 
 
@@ -75,6 +80,7 @@ def parts_part(barrier: AssessedClosure, system: System, more: str) -> str:
     return (
         subheading("Logs and posts")
         + parts_tables(barrier, system, more)
+        + loss_part(barrier, more)
         + subheading("Water over and through it")
         + water_table(barrier, system, more)
     )
@@ -125,11 +131,13 @@ def _log_table(
         ("bearing", "stress", [_more(log, "bearing_pressure") for log in logs]),
         ("sag", "deflection", [float(log.deflection[0]) for log in logs]),
     ]
-    labels = [
-        [log.id.rsplit(" ", 1)[1], f"{elevation(log.bottom, system)} to {elevation(log.top, system)}"]
-        for log in logs
-    ]
+    labels = [[log.id.rsplit(" ", 1)[1], _span(log, system)] for log in logs]
     return _part_rows(barrier, ratios, logs, labels, ("log", "from, to"), columns, system, more)
+
+
+def _span(log: Part, system: System) -> str:
+    low = elevation(log.bottom, system).split(NO_BREAK, maxsplit=1)[0]
+    return f"{low} to {elevation(log.top, system)}"
 
 
 def _post_table(barrier: AssessedClosure, ratios: PartRatios, system: System, more: str) -> str:
@@ -148,8 +156,15 @@ def _post_table(barrier: AssessedClosure, ratios: PartRatios, system: System, mo
         ),
         ("deflection", "deflection", [float(part.deflection[0]) for part in firsts]),
     ]
-    labels = [[escaped(parts_text(part.id for part in group))] for group in groups]
-    body = _part_rows(barrier, ratios, firsts, labels, ("part",), columns, system, more)
+    rows = [
+        ["verdict", *(verdict_mark(barrier.verdict_of(part.id)) for part in firsts)],
+        ["of limit", *(_ratio(ratios.ratio(part.id, 0)) for part in firsts)],
+        [more, *(_ratio(ratios.ratio(part.id, 1)) for part in firsts)],
+        *([words, *_column(values, kind, system)] for words, kind, values in columns if _any(values)),
+    ]
+    names = [parts_text(part.id for part in group) for group in groups]
+    headings = ["", *(escaped(name[:1].upper() + name[1:]) for name in names)]
+    body = table(headings, rows, numeric=set(range(1, len(headings))))
     return subheading("Posts and guides", small=True) + body
 
 
@@ -176,7 +191,7 @@ def _part_rows(
     system: System,
     more: str,
 ) -> str:
-    shown = [column for column in columns if not all(math.isnan(value) for value in column[2])]
+    shown = [column for column in columns if _any(column[2])]
     cells = [_column(values, kind, system) for _, kind, values in shown]
     rows = []
     for place, (part, label) in enumerate(zip(parts, labels, strict=True)):
@@ -184,7 +199,11 @@ def _part_rows(
         own = [_ratio(ratios.ratio(part.id, index)) for index in (0, 1)]
         rows.append([label[0], verdict_mark(verdict), *own, *label[1:], *(column[place] for column in cells)])
     names = [headings[0], "verdict", "of limit", more, *headings[1:], *(column[0] for column in shown)]
-    return table(names, rows, numeric={*range(2, len(names))} - ({4} if len(headings) > 1 else set()))
+    return f'<div class="sh-tight">{table(names, rows, numeric=set(range(2, len(names))))}</div>'
+
+
+def _any(values: list[float]) -> bool:
+    return not all(math.isnan(value) for value in values)
 
 
 def _column(values: list[float], kind: str, system: System) -> list[str]:

@@ -10,7 +10,7 @@ import streamlit as st
 
 from loads.problems import Problem
 from loads.records.basis import Basis
-from webapp import forms, state
+from webapp import barrier_state, forms, state
 from webapp.closure_form import CLOSURE_FORM
 from webapp.markup import escaped
 
@@ -97,9 +97,9 @@ def show_problems(problems: Iterable[Problem]) -> None:
         st.error(f"Nothing was changed; what you typed is still here.\n\n{words}")
 
 
-def panel_form(document: dict[str, Any], place: state.Place, revision: int) -> None:
+def panel_form(document: dict[str, Any], place: barrier_state.Place, revision: int) -> None:
     """Form of one panel: shape, geometry, rated level and limits."""
-    panel = state.record_at(document, place)
+    panel = barrier_state.record_at(document, place)
     where = _where(revision, place)
     shapes = list(forms.SHAPE_FIELDS)
     st.selectbox("Shape", shapes, key=_key(where, "shape", str(panel.get("shape", "rectangle"))))
@@ -117,13 +117,13 @@ def panel_form(document: dict[str, Any], place: state.Place, revision: int) -> N
             kept = forms.without_other(panel, forms.SHAPE_FIELDS, shape)
             changed = forms.with_table({**kept, "shape": shape}, (), changes)
             changed = forms.with_table(changed, ("limits",), limits)
-            if take(state.with_barrier(document, place, changed)):
+            if take(barrier_state.with_barrier(document, place, changed)):
                 st.rerun()
 
 
-def closure_form(document: dict[str, Any], place: state.Place, revision: int) -> None:
+def closure_form(document: dict[str, Any], place: barrier_state.Place, revision: int) -> None:
     """Form of one closure, section by section; the first stands open."""
-    record, where = state.record_at(document, place), _where(revision, place)
+    record, where = barrier_state.record_at(document, place), _where(revision, place)
     changed: dict[str, Any] = dict(record)
     with st.form(f"closure {where}", border=True):
         for section, parts in groupby(CLOSURE_FORM, key=lambda part: part.section):
@@ -136,22 +136,22 @@ def closure_form(document: dict[str, Any], place: state.Place, revision: int) ->
                     own = ".".join((where, *part.path))
                     changes = draw_fields(part.record_name, part.asked, table, own)
                     changed = forms.with_table(changed, part.path, changes)
-        if st.form_submit_button("Take these values", type="primary"):
-            if take(state.with_barrier(document, place, changed)):
-                st.rerun()
+        submitted = st.form_submit_button("Take these values", type="primary")
+        if submitted and take(barrier_state.with_barrier(document, place, changed)):
+            st.rerun()
 
 
 BARRIER_FORMS = {"panel": panel_form, "closure": closure_form}
 """Form of each kind of barrier."""
 
 
-def _where(revision: int, place: state.Place) -> str:
+def _where(revision: int, place: barrier_state.Place) -> str:
     return f"{revision}.{place[0]}.{place[1]}"
 
 
-def sediment_form(document: dict[str, Any], place: state.Place, revision: int) -> None:
+def sediment_form(document: dict[str, Any], place: barrier_state.Place, revision: int) -> None:
     """Forms of the sediment layers of one barrier, one layer each, and a form for another."""
-    record = state.record_at(document, place)
+    record = barrier_state.record_at(document, place)
     layers = record.get("sediment", [])
     where = f"{_where(revision, place)}.sediment"
     for number, layer in enumerate(layers):
@@ -166,7 +166,7 @@ def sediment_form(document: dict[str, Any], place: state.Place, revision: int) -
 
 def _layer_form(
     document: dict[str, Any],
-    place: state.Place,
+    place: barrier_state.Place,
     number: int,
     where: str,
     layer: dict[str, Any],
@@ -181,12 +181,12 @@ def _layer_form(
         with st.container(horizontal=True):
             taken = st.form_submit_button("Take this layer", type="primary")
             removed = not new and st.form_submit_button("Remove this layer")
-        if removed and take(state.with_layer(document, place, number, None)):
+        if removed and take(barrier_state.with_layer(document, place, number, None)):
             st.rerun()
         if taken:
             kept = forms.without_other(layer, forms.PRESSURE_FIELDS, pressure)
             changed = forms.merged(kept, {**changes, "pressure": pressure})
-            if take(state.with_layer(document, place, number, changed)):
+            if take(barrier_state.with_layer(document, place, number, changed)):
                 st.rerun()
 
 

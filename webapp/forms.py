@@ -21,9 +21,9 @@ from loads.records.basis import Basis
 from loads.records.member import LogLimits, PostLimits, known_material
 from loads.records.panel import Limits, Panel
 from loads.records.per_bay import WholeNumbers
+from loads.records.reading import ManometerLeg, Reading
 from loads.records.scenario import Scenario, Water
 from loads.records.sediment import Sediment
-from loads.scenario_file import BARRIER_KEYS
 from loads.units import EXAMPLES
 from webapp.closure_form import CLOSURE_FORM
 
@@ -73,6 +73,8 @@ RECORDS: dict[str, type[Record]] = {
     "panel": Panel,
     "limits": Limits,
     "sediment": Sediment,
+    "reading": Reading,
+    "reading.leg": ManometerLeg,
     **{part.record_name: part.record for part in CLOSURE_FORM},
 }
 
@@ -297,27 +299,3 @@ def with_table(
     inner = with_table(before, path[1:], changes)
     gone = not inner and (bool(before) or path[0] not in record)
     return merged(record, {path[0]: None if gone else inner})
-
-
-def _free_id(document: Mapping[str, Any]) -> str:
-    taken = {record["id"] for kind in BARRIER_KEYS for record in document.get(kind, ())}
-    return next(f"N{n}" for n in range(1, len(taken) + 2) if f"N{n}" not in taken)
-
-
-def _last_foot(document: Mapping[str, Any]) -> str:
-    records = [record for kind in BARRIER_KEYS for record in document.get(kind, ())]
-    return shown(records[-1].get("bottom") or records[-1].get("sill"))
-
-
-def new_panel(document: Mapping[str, Any]) -> dict[str, Any]:
-    """Panel to begin with: an unused id, at the foot of the last barrier, of plain size in the file's unit."""
-    size = ("10 ft", "5 ft") if document.get("units", "US") == "US" else ("3 m", "1.5 m")
-    begun = {"id": _free_id(document), "bottom": _last_foot(document)}
-    return {**begun, "shape": "rectangle", "width": size[0], "height": size[1]}
-
-
-def new_closure(document: Mapping[str, Any]) -> dict[str, Any]:
-    """Closure to begin with: an unused id, at the foot of the last barrier, one bay of plain logs."""
-    size = ("8 ft", "9 in") if document.get("units", "US") == "US" else ("2.5 m", "200 mm")
-    begun = {"id": _free_id(document), "sill": _last_foot(document)}
-    return {**begun, "bays": 1, "bay_width": size[0], "log": {"height": size[1], "count": 8}}

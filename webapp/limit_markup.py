@@ -14,13 +14,15 @@ _MOST = 6
 
 
 def limit_cell(check: Check, system: System) -> str:
-    """Limit of a check as entered, and the elevation that it amounts to."""
+    """Limit of a check as entered, and the elevation or the factored limit that it amounts to."""
     if check.limit is None:
         return "none entered"
     words = escaped(check.limit.text)
-    if check.kind == "elevation" and abs(check.limit.value - check.limit_value) > 1e-9:
+    if abs(check.limit.value - check.limit_value) <= 1e-9 * max(abs(check.limit.value), 1.0):
+        return words
+    if check.kind == "elevation":
         return f"{words}, level {elevation(check.limit_value, system)}"
-    return words
+    return f"{words}, factored {show(check.limit_value, check.kind, system)}"
 
 
 def check_table(checks: Sequence[Check], system: System, more: str) -> str:
@@ -77,7 +79,7 @@ def _distance(barrier: Assessed, reached: Reached, system: System) -> str:
     if level is None or reached.first.without_water:
         return "reached without water on the flood side"
     rise = level - float(barrier.levels.flood_side[0])
-    size = show(abs(rise), "length", system)
+    size = elevation(abs(rise), system)
     return f"{size} above the water now" if rise > 0 else f"passed by {size}"
 
 

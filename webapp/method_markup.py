@@ -5,7 +5,8 @@ from __future__ import annotations
 from collections.abc import Sequence
 
 from loads.cautions import ASSUMPTIONS, CAUTIONS, NOT_COUNTED
-from loads.method import METHODS, MethodGroup
+from loads.method import METHODS
+from loads.method_data import MethodGroup
 from loads.references import REFERENCES
 from webapp.markup import escaped, subheading, table
 

@@ -12,7 +12,7 @@ from loads.assessment import Assessment
 from loads.cautions import HEADLINE
 from loads.document import input_digest
 from loads.scenario_file import Document
-from webapp import state
+from webapp import barrier_state, state
 from webapp.display import System
 from webapp.drawing.palette import DARK, LIGHT, Palette
 from webapp.links import LinkError
@@ -45,10 +45,15 @@ def heading(assessment: Assessment) -> None:
 
 def barrier_choice(document: Document) -> None:
     """Choice of one barrier of the line."""
-    titles = state.barrier_titles(document)
+    titles = barrier_state.barrier_titles(document)
     state.keep_choice(st.session_state, "barrier", list(titles))
     st.selectbox(
-        "Barrier", list(titles), key="barrier", format_func=titles.__getitem__, persist_state="session"
+        "Barrier",
+        list(titles),
+        key="barrier",
+        format_func=titles.__getitem__,
+        persist_state="session",
+        width=420,
     )
 
 
@@ -75,6 +80,23 @@ def level_band() -> None:
         st.segmented_control("Units", ["US", "SI"], key="system", required=True, persist_state="session")
     for problem in st.session_state["level problems"].values():
         st.error(escaped(problem))
+
+
+def logs_band(document: Document, barrier_id: str) -> None:
+    """Buttons that take a log out of every bay of a closure or put one in; nothing for other barriers."""
+    place = barrier_state.place_of(document, barrier_id)
+    if place[0] != "closure":
+        return
+    with st.container(horizontal=True, vertical_alignment="bottom", gap="small", key="logs"):
+        for step, sign, word in ((-1, "−", "Take out"), (1, "+", "Put in")):
+            st.button(
+                f"{sign}1 log",
+                key=f"{word} a log",
+                help=f"{word} a log in every bay, at the top",
+                on_click=barrier_state.move_logs,
+                args=(st.session_state, place, step),
+                disabled=not barrier_state.can_move_logs(document, place, step),
+            )
 
 
 def caution(assessment: Assessment | None = None) -> None:

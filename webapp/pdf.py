@@ -36,6 +36,8 @@ class PrintJob:
     created: dt.datetime
     """Time printed into the metadata, with zone; part of the input, never the clock."""
     attachments: tuple[Attachment, ...] = field(default=())
+    smaller: tuple[str, ...] = ()
+    """The same page set smaller and smaller, each tried while the one before takes more than one sheet."""
 
 
 @cache
@@ -96,7 +98,10 @@ def render(job: PrintJob) -> bytes:
         for attachment in job.attachments
     ]
     try:
-        document = weasyprint.HTML(string=job.html, url_fetcher=fetcher).render(pdf_tags=True)
+        for html in (job.html, *job.smaller):
+            document = weasyprint.HTML(string=html, url_fetcher=fetcher).render(pdf_tags=True)
+            if len(document.pages) == 1:
+                break
         document.metadata.created = document.metadata.modified = _stamp(job.created)
         document.metadata.attachments = attachments
         content = document.write_pdf(pdf_tags=True)

@@ -144,6 +144,7 @@ def _job_bytes(job: PrintJob) -> bytes:
         {
             "html": job.html,
             "created": job.created.isoformat(),
+            "smaller": job.smaller,
             "attachments": [
                 [item.name, item.description, base64.b64encode(item.content).decode()]
                 for item in job.attachments
@@ -157,6 +158,7 @@ def _job(content: bytes) -> PrintJob:
     return PrintJob(
         html=fields["html"],
         created=dt.datetime.fromisoformat(fields["created"]),
+        smaller=tuple(fields["smaller"]),
         attachments=tuple(
             Attachment(name=name, description=description, content=base64.b64decode(content))
             for name, description, content in fields["attachments"]

@@ -16,7 +16,6 @@ from loads.problems import Problem, ScenarioError
 from loads.quantity import read_quantity
 from loads.records.scenario import Scenario
 from loads.scenario_file import (
-    BARRIER_KEYS,
     Document,
     parse_document,
     read_file,
@@ -24,7 +23,7 @@ from loads.scenario_file import (
     write_document,
 )
 from loads.units import from_si
-from webapp.display import System, barrier_title
+from webapp.display import System
 from webapp.links import LinkError, decode_document, encode_document
 from webapp.scenario_files import example_files
 
@@ -70,8 +69,8 @@ def _open_link(session: Session, address: str) -> None:
 def settle(session: Session) -> None:
     """Fill the fields of levels and units: for a new document, or when a page without them dropped them."""
     document = session["document"]
-    if session.pop("new document", False) or "system" not in session:
-        session["system"] = scenario_of(document).units
+    kept = None if session.pop("new document", False) else session.get("system")
+    session["system"] = kept or scenario_of(document).units  # written anew for the reason told below
     fresh = session.pop("new levels", False)
     for side, key in LEVEL_FIELDS.items():
         if fresh or key not in session:
@@ -206,84 +205,3 @@ def take_text(session: Session, text: str) -> tuple[Problem, ...]:
     except ScenarioError as error:
         return error.problems
     return replace_document(session, document)
-
-
-Place = tuple[str, int]
-"""Where a barrier stands in a document: its table, such as "closure", and its number there from 0."""
-
-
-def barrier_titles(document: Document) -> dict[str, str]:
-    """Id and title of every barrier, kind by kind, in the order of the file."""
-    return {
-        str(record["id"]): barrier_title(str(record["id"]), str(record.get("name", "")))
-        for kind in BARRIER_KEYS
-        for record in document.get(kind, ())
-    }
-
-
-def place_of(document: Document, barrier_id: str) -> Place:
-    """Place of the barrier with an id.
-
-    Raises
-    ------
-    KeyError
-        There is none.
-    """
-    for kind in BARRIER_KEYS:
-        for number, record in enumerate(document.get(kind, ())):
-            if str(record["id"]) == barrier_id:
-                return kind, number
-    raise KeyError(barrier_id)
-
-
-def record_at(document: Document, place: Place) -> dict[str, Any]:
-    """Table of the barrier at a place."""
-    record: dict[str, Any] = document[place[0]][place[1]]
-    return record
-
-
-def with_barrier(document: Document, place: Place, record: dict[str, Any]) -> Document:
-    """Copy of a document with one barrier changed."""
-    changed = copy.deepcopy(document)
-    changed[place[0]][place[1]] = record
-    return changed
-
-
-def with_layer(document: Document, place: Place, number: int, layer: dict[str, Any] | None) -> Document:
-    """Copy of a document with one sediment layer of a barrier changed, added at the end, or taken out."""
-    changed = copy.deepcopy(document)
-    record = record_at(changed, place)
-    layers = list(record.get("sediment", []))
-    layers[number : number + 1] = [] if layer is None else [layer]
-    record.pop("sediment", None)
-    if layers:
-        record["sediment"] = layers
-    return changed
-
-
-def add_barrier(session: Session, kind: str, record: dict[str, Any]) -> None:
-    """Add a barrier of a kind at the end and choose it."""
-    changed = copy.deepcopy(session["document"])
-    changed.setdefault(kind, []).append(record)
-    if not replace_document(session, changed):
-        session["barrier"] = record["id"]
-
-
-def copy_barrier(session: Session, place: Place) -> None:
-    """Add a copy of a barrier under an id that is free, and choose it."""
-    document = session["document"]
-    taken = set(barrier_titles(document))
-    record = record_at(document, place)
-    stem = str(record["id"])[:18]
-    free = next(f"{stem}-{n}" for n in range(2, len(taken) + 3) if f"{stem}-{n}" not in taken)
-    add_barrier(session, place[0], {**copy.deepcopy(record), "id": free})
-
-
-def remove_barrier(session: Session, place: Place) -> None:
-    """Take a barrier out."""
-    changed = copy.deepcopy(session["document"])
-    kind, number = place
-    del changed[kind][number]
-    if not changed[kind]:
-        del changed[kind]
-    replace_document(session, changed)

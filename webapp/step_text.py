@@ -134,6 +134,18 @@ def _cell(cell: Cell, kind: str, system: System, decimals: int) -> str:
     return fixed(in_working_unit(cell, kind, system), decimals)
 
 
+def show_column(values: list[float], kind: str, system: System, digits: int = PRINT_DIGITS) -> list[str]:
+    """Values of a column without their unit, all with the decimals that the largest of them needs.
+
+    Examples
+    --------
+    >>> show_column([4321.09, 43.2109], "force", "US", 4)
+    ['971.4', '9.7']
+    """
+    decimals = decimals_for([in_working_unit(value, kind, system) for value in values], kind, digits)
+    return [_cell(value, kind, system, decimals) for value in values]
+
+
 def percent(change: float, digits: int = 3) -> str:
     """Change as a percentage with its sign.
 

@@ -43,13 +43,13 @@ def table_text(assessment: Assessment, document: Mapping[str, object]) -> str:
         f"{scenario.title}   [{scenario.status}]   {code}",
         f"flood side {elevation(flood, system, scenario.datum)}   protected side {behind}   {time}",
         "",
-        *_aligned([_HEADINGS, *(_row(barrier, system) for barrier in assessment.barriers)]),
+        *aligned([_HEADINGS, *(_row(barrier, system) for barrier in assessment.barriers)], _RIGHT),
         "",
         *_remarks(assessment.barriers),
         _LEGEND,
         f"Sillhead {__version__}. {HEADLINE}",
     ]
-    return _plain("\n".join(lines))
+    return plain("\n".join(lines))
 
 
 def _row(barrier: Barrier, system: System) -> tuple[str, ...]:
@@ -110,10 +110,11 @@ def disagreement_text(first: tuple[float, float], second: tuple[float, float], s
     )
 
 
-def _aligned(rows: Sequence[tuple[str, ...]]) -> list[str]:
+def aligned(rows: Sequence[tuple[str, ...]], right: frozenset[int]) -> list[str]:
+    """Rows as lines with their columns one under the other, those of `right` ending together."""
     widths = [max(_width(row[i]) for row in rows) for i in range(len(rows[0]))]
     return [
-        "  ".join(_padded(cell, widths[i], right=i in _RIGHT) for i, cell in enumerate(row)).rstrip()
+        "  ".join(_padded(cell, widths[i], right=i in right) for i, cell in enumerate(row)).rstrip()
         for row in rows
     ]
 
@@ -129,5 +130,6 @@ def _width(text: str) -> int:
     return len(text) + wide - sum(bool(unicodedata.combining(c)) for c in text)
 
 
-def _plain(text: str) -> str:
+def plain(text: str) -> str:
+    """Text for a terminal: plain blanks only."""
     return text.replace(NO_BREAK, " ").replace(THOUSANDS, " ")

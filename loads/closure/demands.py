@@ -211,10 +211,9 @@ def guide_forces(diagram: Diagram, guide: Upright, sill: float) -> tuple[FloatAr
 
 def _columns(kind: type[Forces], found: list[Forces], states: int) -> Forces:
     """Figures of several posts side by side, each (n, p)."""
-    columns = {
-        field.name: np.column_stack([getattr(one, field.name) for one in found])
-        if found
-        else np.zeros((states, 0))
-        for field in fields(kind)
-    }
-    return kind(**columns)
+    names = [field.name for field in fields(kind)]
+    if not found:
+        return kind(**dict.fromkeys(names, np.zeros((states, 0))))
+    each = {id(one): np.array([getattr(one, name) for name in names]) for one in found}
+    together = np.stack([each[id(one)] for one in found], axis=-1)
+    return kind(**dict(zip(names, together, strict=True)))

@@ -2,8 +2,8 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
 from dataclasses import dataclass
-from functools import cached_property
 
 import numpy as np
 
@@ -55,36 +55,34 @@ class LimitSearch:
         found += part_tables(demands, self.basis, self.near)
         return [check for check in found if not np.isnan(check.limit_value).all()]
 
-    def ratios(self, flood_side: FloatArray) -> FloatArray:
-        """Signed ratios at flood-side levels, shape (n, c)."""
-        return np.column_stack(
-            [
-                check.demand / check.limit_value
-                for check in self._checks(risen(self.found.setting, flood_side))
-            ]
-        )
+    def _ratios(self, names: list[Name]) -> Callable[[FloatArray], FloatArray]:
+        """Signed ratios (n, c) at flood-side levels; the first call fills in subject and name of each check."""
 
-    @cached_property
-    def names(self) -> list[Name]:
-        """Subject and name of each check."""
-        checks = self._checks(risen(self.found.setting, np.array([self.structure.layout.sill])))
-        return [
-            (subject, check.name)
-            for check in checks
-            for subject in ((check.subject,) if isinstance(check, Check) else check.subjects)
-        ]
+        def ratios(flood_side: FloatArray) -> FloatArray:
+            checks = self._checks(risen(self.found.setting, flood_side))
+            if not names:
+                names.extend((subject, check.name) for check in checks for subject in _subjects(check))
+            if not checks:
+                return np.full((len(flood_side), 1), np.nan)
+            return np.column_stack([check.demand / check.limit_value for check in checks])
+
+        return ratios
 
     def first(self) -> FirstLimit | None:
         """First-limit level of the closure; None without a load limit."""
-        if not self.names:
-            return None
-        return first_of(self.names, self.ratios, low=self.structure.layout.sill, high=self._ceiling())
+        names: list[Name] = []
+        low, high = self.structure.layout.sill, self._ceiling()
+        found = first_of(names, self._ratios(names), low=low, high=high)
+        return found if names else None
 
     def each(self) -> tuple[FirstLimit, ...]:
         """Level at which each check reaches its limit, lowest first."""
-        if not self.names:
-            return ()
-        return each_of(self.names, self.ratios, low=self.structure.layout.sill, high=self._ceiling())
+        names: list[Name] = []
+        return each_of(names, self._ratios(names), low=self.structure.layout.sill, high=self._ceiling())
 
     def _ceiling(self) -> float:
         return ceiling_of(self.found.setting, self.found.face)
+
+
+def _subjects(check: Check | CheckTable) -> tuple[str, ...]:
+    return (check.subject,) if isinstance(check, Check) else check.subjects

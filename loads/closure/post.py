@@ -133,6 +133,10 @@ def _free_deflection(load: Diagram, x: FloatArray, foot: tuple[FloatArray, Float
     return np.asarray(x * foot[0] - foot[1] + load.moment_second_integral(x))
 
 
+def _free_at_prop(load: Diagram, prop: Prop, foot: tuple[FloatArray, FloatArray]) -> FloatArray:
+    return _free_deflection(load, np.array([[prop.height]]), foot)
+
+
 def _prop_kernel(x: FloatArray, height: float) -> FloatArray:
     below = np.minimum(x, height)
     return np.asarray(height * below**2 / 2 - below**3 / 6 + (x - below) * height**2 / 2)
@@ -166,7 +170,7 @@ def prop_force(load: Diagram, prop: Prop) -> FloatArray:
     """
     if prop.fixity == "pinned":
         return load.moment(np.zeros(1)) / prop.height
-    return _free_deflection(load, np.array([[prop.height]]), _at_foot(load)) / (prop.height**3 / 3)
+    return _free_at_prop(load, prop, _at_foot(load)) / (prop.height**3 / 3)
 
 
 def post_forces(load: Diagram, *, height: float, stiffness: float, prop: Prop | None) -> PostForces:
@@ -192,16 +196,18 @@ def post_forces(load: Diagram, *, height: float, stiffness: float, prop: Prop | 
     -----
     The brace is taken as stiff and able to push and pull.
     """
-    push = np.zeros((load.states, 1)) if prop is None else prop_force(load, prop)
-    turn = np.zeros((load.states, 1))
-    if prop is not None and prop.fixity == "pinned":
-        at_brace = _free_deflection(load, np.array([[prop.height]]), _at_foot(load))
-        free = at_brace - push * prop.height**3 / 3
-        turn = -free / (stiffness * prop.height)
-    bent = _Bent(load, prop, push, turn, stiffness, _at_foot(load))
-    foot, top = np.zeros((1, 1)), np.full((1, 1), height)
+    push, turn, at_foot = np.zeros((load.states, 1)), np.zeros((load.states, 1)), _at_foot(load)
+    if prop is not None:
+        free = _free_at_prop(load, prop, at_foot)
+        if prop.fixity == "pinned":
+            push = prop_force(load, prop)
+            turn = -(free - push * prop.height**3 / 3) / (stiffness * prop.height)
+        else:
+            push = free / (prop.height**3 / 3)
+    bent = _Bent(load, prop, push, turn, stiffness, at_foot)
+    foot = np.zeros((1, 1))
     moment, moment_height, shear = _extremes(bent, height)
-    sag, sag_height = _greatest_deflection(bent, height)
+    sag, sag_height, at_top = _deflections(bent, height)
     missing = np.full(load.states, np.nan)
     total = load.shear(foot)
     return PostForces(
@@ -213,7 +219,7 @@ def post_forces(load: Diagram, *, height: float, stiffness: float, prop: Prop | 
         moment=moment,
         moment_height=moment_height,
         shear=shear,
-        top_deflection=bent.deflection(top)[:, 0] if np.isfinite(stiffness) else missing,
+        top_deflection=at_top,
         deflection=sag,
         deflection_height=sag_height,
         brace_force=missing if prop is None else push[:, 0] / np.cos(prop.angle),
@@ -257,13 +263,17 @@ def _extremes(bent: _Bent, height: float) -> tuple[FloatArray, FloatArray, Float
     return moment, height_of, shear
 
 
-def _greatest_deflection(bent: _Bent, height: float) -> tuple[FloatArray, FloatArray]:
-    """Greatest deflection and its height: best of a grid, then Newton's steps to where the slope is nil."""
-    states = bent.load.states
+def _deflections(bent: _Bent, height: float) -> tuple[FloatArray, FloatArray, FloatArray]:
+    """Greatest deflection, its height, and that at the top.
+
+    The greatest of a grid, then Newton's steps to where the slope is nil.
+    """
     if not np.isfinite(bent.stiffness):
-        return np.full(states, np.nan), np.full(states, np.nan)
+        missing = np.full(bent.load.states, np.nan)
+        return missing, missing, missing
     grid = np.linspace(0.0, height, _GRID + 1)[None, :]
-    sampled, column = _greatest(bent.deflection(grid))
+    found = bent.deflection(grid)
+    sampled, column = _greatest(found)
     place = grid[0, column][:, None]
     least, most = place - height / _GRID, np.minimum(place + height / _GRID, height)
     x = place
@@ -273,4 +283,4 @@ def _greatest_deflection(bent: _Bent, height: float) -> tuple[FloatArray, FloatA
         x = np.clip(x - step, np.maximum(least, 0.0), most)
     refined = bent.deflection(x)[:, 0]
     better = np.abs(refined) >= np.abs(sampled)
-    return np.where(better, refined, sampled), np.where(better, x[:, 0], place[:, 0])
+    return np.where(better, refined, sampled), np.where(better, x[:, 0], place[:, 0]), found[:, -1]

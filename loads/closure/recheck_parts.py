@@ -113,7 +113,8 @@ def _logs(
     """End reaction and mid-span moment of every log."""
     layout = demands.structure.layout
     row = np.clip(((z - layout.sill) / layout.log_height).astype(np.intp), 0, layout.rows - 1)
-    by_row = np.stack([np.where(row == one, push, 0.0).sum(axis=1) for one in range(layout.rows)], axis=1)
+    within = row[:, :, None] == np.arange(layout.rows)
+    by_row = np.einsum("np,npr->nr", push, within)
     load = by_row[:, layout.row_of]
     span = layout.spans[layout.bay_of]
     reaction = load * span / 2

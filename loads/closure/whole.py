@@ -52,6 +52,7 @@ def whole_checks(closure: Closure, layout: Layout, found: Pressed, near: float) 
             highest=float(highest),
             near=near,
             remarks=remarks,
+            grades_below=limit is not stack,
         )
     if closure.guide.one_way:
         yield _reverse(closure, found, near)

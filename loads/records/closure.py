@@ -10,6 +10,7 @@ from loads.quantity import Quantity
 from loads.records.base import Measure, Name, Note, Record, several_problems
 from loads.records.closure_parts import Anchor, Log, Post, Whole
 from loads.records.closure_site import Adding, Guide, Handling, HoldDown, Install, Seal
+from loads.records.crew import BarrierClock
 from loads.records.member import small_size
 from loads.records.panel import Elevation, Limits, Panel
 from loads.records.per_bay import WholeNumbers, for_each_bay
@@ -56,6 +57,7 @@ class Closure(Record):
     seal: Seal | None = None
     adding: Adding | None = None
     install: Install | None = None
+    clock: BarrierClock | None = None
     handling: Handling | None = None
     parts_short: Annotated[tuple[Note, ...], Field(max_length=50, strict=False)] = ()
     sediment: Annotated[tuple[Sediment, ...], Field(max_length=20, strict=False)] = ()

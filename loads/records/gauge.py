@@ -144,6 +144,19 @@ class Gauge(Record):
     highest_true_reading: Annotated[Quantity, _stage("Highest reading to trust", "31 ft")] | None = None
     lowest_on_record: Annotated[Quantity, _stage("Lowest reading in its history", "4 ft")] | None = None
     highest_on_record: Annotated[Quantity, _stage("Highest reading in its history", "28 ft")] | None = None
+    fastest_change: (
+        Annotated[
+            Quantity,
+            Measure(
+                kind="length",
+                meaning="Change of the reading in one hour that is not believed without a second look",
+                above="0 ft",
+                most="100 ft",
+                example="1.5 ft",
+            ),
+        ]
+        | None
+    ) = None
     transfer: Annotated[tuple[Transfer, ...], Field(max_length=500, strict=False)] = ()
     note: Note = ""
 

@@ -2,26 +2,27 @@
 
 from __future__ import annotations
 
-from datetime import datetime
 from typing import Annotated, Literal
 
 from pydantic import Field, field_validator, model_validator
 
 from loads.quantity import Quantity
-from loads.records.base import Measure, Name, Note, Record, problem_error, several_problems
+from loads.records.base import Measure, Name, Note, Record, several_problems
 from loads.records.fluid import FluidKind, Salinity, SuspendedSediment, Temperature, UnitWeight
+from loads.records.moment import Moment
 from loads.records.panel import Elevation
 
 ReadingKind = Literal["staff", "manometer", "bubbler", "vented logger", "sealed logger"]
 
 _WATER = ("fluid", "temperature", "salinity", "suspended_sediment", "unit_weight")
-_NEEDED: dict[str, tuple[str, ...]] = {
+FIELDS_NEEDED: dict[str, tuple[str, ...]] = {
     "staff": ("zero_elevation", "staff_reading"),
     "manometer": ("sensor_elevation", "leg"),
     "bubbler": ("sensor_elevation", "pressure"),
     "vented logger": ("sensor_elevation", "pressure"),
     "sealed logger": ("sensor_elevation", "pressure", "barometer"),
 }
+"""Fields that each kind of instrument cannot do without."""
 _OPTIONAL: dict[str, tuple[str, ...]] = {
     "staff": (),
     "manometer": ("end_pressure", *_WATER),
@@ -46,9 +47,12 @@ _OPTIONAL: dict[str, tuple[str, ...]] = {
     ),
 }
 _SPECIFIC = tuple(
-    dict.fromkeys(name for table in (_NEEDED, _OPTIONAL) for names in table.values() for name in names)
+    dict.fromkeys(name for table in (FIELDS_NEEDED, _OPTIONAL) for names in table.values() for name in names)
 )
-_MOMENT = "2031-04-02T06:00:00-05:00"
+FIELDS_OF_KIND: dict[str, tuple[str, ...]] = {
+    kind: needed + _OPTIONAL[kind] for kind, needed in FIELDS_NEEDED.items()
+}
+"""Fields that each kind of instrument uses, those it needs first."""
 _GAS_COLUMN = ("barometer", "gas_temperature", "gas_density", "air_density")
 
 Pressure = Annotated[
@@ -170,7 +174,9 @@ class Reading(Record):
     name: Name = ""
     kind: ReadingKind = Field(description="What kind of instrument it is.")
     side: Literal["flood", "protected"] = "flood"
-    as_of: datetime | None = None
+    as_of: Moment | None = Field(
+        default=None, description="When it was read, with its zone, for example 2031-04-02T06:00:00-05:00."
+    )
     zero_elevation: Elevation | None = None
     staff_reading: (
         Annotated[
@@ -212,18 +218,6 @@ class Reading(Record):
     def _list_becomes_tuple(cls, value: object) -> object:
         return tuple(value) if isinstance(value, list) else value
 
-    @field_validator("as_of", mode="before")
-    @classmethod
-    def _time_has_a_zone(cls, value: object) -> object:
-        if isinstance(value, str):
-            try:
-                value = datetime.fromisoformat(value)
-            except ValueError:
-                raise problem_error(f"is no date and time; write for example {_MOMENT}") from None
-        if isinstance(value, datetime) and value.tzinfo is None:
-            raise problem_error(f"needs a time zone, for example {_MOMENT}")
-        return value
-
     @model_validator(mode="after")
     def _fields_fit_the_kind(self) -> Reading:
         problems = self._missing_and_unused()
@@ -238,7 +232,7 @@ class Reading(Record):
         return self
 
     def _missing_and_unused(self) -> list[tuple[str, str, str]]:
-        needed = _NEEDED[self.kind]
+        needed = FIELDS_NEEDED[self.kind]
         problems = [
             (name, "", f'is missing; kind "{self.kind}" needs it')
             for name in needed
@@ -247,7 +241,7 @@ class Reading(Record):
         problems += [
             (name, "given", f'is not used by kind "{self.kind}"; leave it out')
             for name in _SPECIFIC
-            if name not in needed + _OPTIONAL[self.kind] and getattr(self, name) is not None
+            if name not in FIELDS_OF_KIND[self.kind] and getattr(self, name) is not None
         ]
         return problems
 

@@ -8,46 +8,19 @@ from typing import Annotated, Any, Literal
 
 from pydantic import Field, field_validator, model_validator
 
-from loads.quantity import Quantity
-from loads.records.base import Measure, Name, Note, Record, problem_error, several_problems
+from loads.records.base import Name, Note, Record, several_problems
 from loads.records.basis import Basis
 from loads.records.closure import Closure
+from loads.records.crew import Crew, crew_problems
+from loads.records.fluid import FluidKind, Salinity, SuspendedSediment, Temperature, UnitWeight
+from loads.records.gauge import Gauge, gauge_problems
+from loads.records.moment import Moment, ZoneName
 from loads.records.panel import Elevation, Panel
+from loads.records.reading import Reading
+from loads.records.series import DataAge, StoredForecast, StoredObservation, series_problems
 
 FORMAT = 1
 """Version of the scenario format that this program writes; it reads every version up to it."""
-
-Fluid = Literal["fresh", "sea", "custom"]
-UnitWeight = Annotated[
-    Quantity,
-    Measure(
-        kind="unit weight",
-        meaning="Unit weight of the water, entered directly",
-        least="50 pcf",
-        most="120 pcf",
-        example="62.4 pcf",
-    ),
-]
-Temperature = Annotated[
-    Quantity,
-    Measure(
-        kind="temperature",
-        meaning="Water temperature",
-        least="-2 degC",
-        most="40 degC",
-        example="50 degF",
-    ),
-]
-Salinity = Annotated[float, Field(ge=0, le=42, allow_inf_nan=False)]
-SuspendedSediment = Annotated[
-    Quantity,
-    Measure(
-        kind="density",
-        meaning="Mass of suspended sediment per volume of mixture",
-        least="0 kg/m3",
-        most="600 kg/m3",
-    ),
-]
 
 
 class Water(Record):
@@ -55,31 +28,17 @@ class Water(Record):
 
     flood_side: Elevation
     protected_side: Elevation | None = None
-    as_of: datetime | None = None
-    fluid: Fluid = "fresh"
+    as_of: Moment | None = None
+    fluid: FluidKind = "fresh"
     temperature: Temperature | None = None
     salinity: Salinity | None = None
     suspended_sediment: SuspendedSediment | None = None
     unit_weight: UnitWeight | None = None
-    protected_fluid: Fluid | None = None
+    protected_fluid: FluidKind | None = None
     protected_temperature: Temperature | None = None
     protected_salinity: Salinity | None = None
     protected_suspended_sediment: SuspendedSediment | None = None
     protected_unit_weight: UnitWeight | None = None
-
-    @field_validator("as_of", mode="before")
-    @classmethod
-    def _time_has_a_zone(cls, value: object) -> object:
-        if isinstance(value, str):
-            try:
-                value = datetime.fromisoformat(value)
-            except ValueError:
-                raise problem_error(
-                    "is no date and time; write for example 2031-04-02T06:00:00-05:00"
-                ) from None
-        if isinstance(value, datetime) and value.tzinfo is None:
-            raise problem_error("needs a time zone, for example 2031-04-02T06:00:00-05:00")
-        return value
 
     @model_validator(mode="after")
     def _custom_has_a_weight(self) -> Water:
@@ -123,16 +82,36 @@ class Scenario(Record):
     status: Literal["draft", "screening", "for review"] = "screening"
     datum: Annotated[Name, Field(min_length=1)]
     units: Literal["US", "SI"] = "US"
+    zone: ZoneName | None = None
     near_limit: Annotated[float, Field(ge=0.5, lt=1, allow_inf_nan=False)] = 0.9
     basis: Basis = Basis()
     water: Water
     panel: Annotated[tuple[Panel, ...], Field(max_length=500)] = ()
     closure: Annotated[tuple[Closure, ...], Field(max_length=500)] = ()
+    reading: Annotated[tuple[Reading, ...], Field(max_length=200)] = ()
+    gauge: Annotated[tuple[Gauge, ...], Field(max_length=50)] = ()
+    crew: Annotated[tuple[Crew, ...], Field(max_length=100)] = ()
+    forecast: Annotated[tuple[StoredForecast, ...], Field(max_length=100)] = ()
+    observed: Annotated[tuple[StoredObservation, ...], Field(max_length=50)] = ()
+    data_age: DataAge = DataAge()
 
-    @field_validator("panel", "closure", mode="before")
+    @field_validator("panel", "closure", "reading", "gauge", "crew", "forecast", "observed", mode="before")
     @classmethod
     def _list_becomes_tuple(cls, value: object) -> object:
         return tuple(value) if isinstance(value, list) else value
+
+    @model_validator(mode="after")
+    def _clock_fits_the_line(self) -> Scenario:
+        clocks = {f"closure[{one.id}]": one.clock for one in self.closure if one.clock is not None}
+        gauges = [gauge.id for gauge in self.gauge]
+        problems = [
+            *gauge_problems(self.gauge, [barrier.id for barrier in self.barriers], self.datum),
+            *crew_problems(self.crew, clocks),
+            *series_problems(gauges, self.forecast, self.observed),
+        ]
+        if problems:
+            raise several_problems(problems)
+        return self
 
     @property
     def barriers(self) -> tuple[Panel | Closure, ...]:

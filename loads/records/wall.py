@@ -201,11 +201,11 @@ class Wall(Record):
         problems: list[Triple] = []
         for i, part in enumerate(self.part):
             shape = Polygon(ring_values(part.points))
-            if not shape.is_valid:
+            if shape.convex_hull.area <= 0:
+                problems.append((f"part[{i}].points", "", "enclose no area; the corners lie on one line"))
+            elif not shape.is_valid:
                 reason = explain_validity(shape).lower()
                 problems.append((f"part[{i}].points", "", f"do not make a closed outline: {reason} (metres)"))
-            elif shape.area <= 0:
-                problems.append((f"part[{i}].points", "", "enclose no area; the corners lie on one line"))
         corners = [corner for part in self.part for corner in ring_values(part.points)]
         slack = _SLACK * max(1.0, abs(self.base.value))
         if len({x for x, z in corners if abs(z - self.base.value) <= slack}) < 2:

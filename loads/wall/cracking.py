@@ -11,8 +11,9 @@ from loads.arrays import BoolArray, FloatArray
 from loads.states import Levels
 from loads.wall.base_pressure import base_pressure, open_lengths
 from loads.wall.section import Section
+from loads.wall.seepage_path import end_heads
 from loads.wall.site import Site
-from loads.wall.uplift import Cracks, Uplift, end_heads, uplift
+from loads.wall.uplift import Cracks, Uplift, uplift
 
 SETTLED = 1e-12
 """Change of a crack between two rounds, as a share of the base, at which it has settled. [–]"""
@@ -20,8 +21,10 @@ ROUNDS = 400
 """Rounds after which a crack that has not settled is reported as such."""
 
 
-def uplift_of(section: Section, levels: Levels, site: Site, cracks: Cracks) -> Uplift:
-    """Uplift on the underside of sections with given cracks."""
+def uplift_of(
+    section: Section, levels: Levels, site: Site, cracks: Cracks, datum: FloatArray | None = None
+) -> Uplift:
+    """Uplift on the underside of sections with given cracks; cutoffs count from `datum`, else the base."""
     base = section.base
     heads = end_heads(site.path, base, levels.flood_side, levels.protected_side)
     higher = np.maximum(levels.flood_side, levels.protected_side)
@@ -36,6 +39,7 @@ def uplift_of(section: Section, levels: Levels, site: Site, cracks: Cracks) -> U
         open_heads=(open_heads[0], open_heads[1]),
         unit_weight=max(site.waters.flood, site.waters.protected),
         cracks=cracks,
+        datum=base if datum is None else datum,
     )
 
 

@@ -197,10 +197,13 @@ def embedment(wall: IWall, levels: Levels, waters: Waters) -> Embedment:
     start = min(ground, wall.ground("flood"))
     depths = np.linspace(0.0, SEARCH * exposed, _POINTS)
 
-    def turning(tip: FloatArray) -> FloatArray:
-        return sheet_pressure(wall, levels, waters, tip).net.moment(tip[:, None])[:, 0]
+    def turning(tip: FloatArray, at: Levels) -> FloatArray:
+        return sheet_pressure(wall, at, waters, tip).net.moment(tip[:, None])[:, 0]
 
-    values = np.stack([turning(np.full(states, start - depth)) for depth in depths])
+    swept = Levels(
+        flood_side=np.tile(levels.flood_side, _POINTS), protected_side=np.tile(levels.protected_side, _POINTS)
+    )
+    values = turning(np.repeat(start - depths, states), swept).reshape(_POINTS, states)
     holds = values <= 0
     drives = (~holds).any(axis=0)
     last = np.where(drives, _POINTS - 1 - np.argmax(~holds[::-1], axis=0), 0)
@@ -210,7 +213,7 @@ def embedment(wall: IWall, levels: Levels, waters: Waters) -> Embedment:
     high = np.where(drives, high, low)
     for _ in range(_HALVINGS):
         middle = (low + high) / 2
-        over = turning(middle) > 0
+        over = turning(middle, levels) > 0
         low, high = np.where(over, middle, low), np.where(over, high, middle)
     balanced = np.where(found, ground - high, np.nan)
     tip = np.where(found, high, wall.tip.value)

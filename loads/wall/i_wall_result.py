@@ -184,7 +184,8 @@ def _seepage_checks(record: IWall, values: dict[str, Any], near: float) -> list[
         np.asarray(values[name]) for name in ("exit_gradient", "critical_gradient", "creep_ratio")
     )
     asked = record.exit_gradient_factor
-    factor = np.divide(critical, gradient, out=np.full_like(gradient, np.inf), where=gradient > 0)
+    with np.errstate(over="ignore"):
+        factor = np.divide(critical, gradient, out=np.full_like(gradient, np.inf), where=gradient > 0)
     least = LANE_RATIOS.get(record.material)
     return [
         factor_check(

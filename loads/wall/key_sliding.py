@@ -39,7 +39,7 @@ def key_sliding(
     low, high = section.lowest, section.base
     corners = (np.stack([np.zeros_like(low), section.base_width], axis=1), np.stack([low, low], axis=1))
     flat = Section(parts=(), x=corners[0], z=corners[1], toe=1, protected_top=1, flood_top=1, stem=None)
-    plane = uplift_of(flat, levels, site, cracks)
+    plane = uplift_of(flat, levels, site, cracks, section.base)
     below_x, below_z = section.chain("base")
     drop = high[:, None] - (below_z[:, 1:] + below_z[:, :-1]) / 2
     hanging = -(drop * np.diff(below_x, axis=1)).sum(axis=1)

@@ -3,14 +3,17 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
+from dataclasses import dataclass
 
 import numpy as np
+from shapely import LineString
 
 from loads.arrays import FloatArray
 from loads.records.sediment import Sediment
 from loads.sediment import cohesion_pressure, face_coefficient, unit_weights
 from loads.states import Levels
 from loads.wall.section import Section
+from loads.wall.seepage_path import SeepagePath
 from loads.wall.site import Site
 from loads.wall.uplift import Cracks
 
@@ -63,74 +66,94 @@ def head_along_base(
     section: Section, levels: Levels, site: Site, cracks: Cracks, edge: int, share: FloatArray
 ) -> FloatArray:
     """Total head at shares (n, m) of one edge of the underside, (n, m). [m]."""
-    path = site.path
     x, z = (part[0] for part in section.chain("base"))
+    walk = _Walk(x=x, z=z, path=site.path)
     spot = x[edge] + (x[edge + 1] - x[edge]) * share
-    width = x[-1] - x[0]
-    base = float(z[0])
+    at_heel, at_toe = _end_heads(walk, levels, cracks)
+    tips = cracks.heel[:, None], x[-1] - x[0] - cracks.toe[:, None]
+    here = sum(abs(z[i + 1] - z[i]) for i in range(edge)) + abs(z[edge + 1] - z[edge]) * share
+    begin = np.where(tips[0] > 0, walk.loss(tips[0], walk.uprights(tips[0]), beyond=False), 0.0)
+    finish = np.where(
+        cracks.toe[:, None] > 0, walk.loss(tips[1], walk.uprights(tips[1]), beyond=True), walk.whole()
+    )
+    upright = bool(x[edge + 1] == x[edge])
+    at = walk.loss(spot, here, beyond=upright)
+    head = _falling(at, begin, finish, at_heel, at_toe)
+    if site.path.drain is not None:
+        where, kind, figure = site.path.drain
+        place = np.array([[where]])
+        drained = walk.loss(place, walk.uprights(place), beyond=False)
+        bare = _falling(drained, begin, finish, at_heel, at_toe)
+        full = bare if kind == "effectiveness" else at_heel
+        kept = at_toe + ((1 - figure) if kind == "effectiveness" else figure) * (full - at_toe)
+        upper = _falling(at, begin, drained, at_heel, kept)
+        lower = _falling(at, drained, finish, kept, at_toe)
+        works = (where > tips[0]) & (where < tips[1])
+        head = np.where(works, np.where(spot < where, upper, lower), head)
+    past = (spot >= tips[1]) & (cracks.toe[:, None] > 0) if upright else spot > tips[1]
+    return np.where(spot < tips[0], at_heel, np.where(past, at_toe, head))
+
+
+def _end_heads(walk: _Walk, levels: Levels, cracks: Cracks) -> tuple[FloatArray, FloatArray]:
+    """Total heads at heel and toe, in a crack that of its side, each (n, 1)."""
+    path, base = walk.path, float(walk.z[0])
     higher = np.maximum(levels.flood_side, levels.protected_side)
     outlets = (path.flood_ground, path.protected_ground) if path.creeps else (base, base)
-    closed = [
-        np.minimum(np.maximum(level, max(outlet, base)), higher)
-        for level, outlet in zip((levels.flood_side, levels.protected_side), outlets, strict=True)
-    ]
-    gaping = [
-        np.minimum(np.maximum(level, base), higher) for level in (levels.flood_side, levels.protected_side)
-    ]
-    cracked = (cracks.heel > 0, cracks.toe > 0)
-    at_heel, at_toe = (
-        np.maximum(np.where(crack, gap, shut), _DEEP)[:, None]
-        for crack, gap, shut in zip(cracked, gaping, closed, strict=True)
-    )
+    found = []
+    for level, outlet, crack in zip(
+        (levels.flood_side, levels.protected_side), outlets, (cracks.heel, cracks.toe), strict=True
+    ):
+        shut = np.minimum(np.maximum(level, max(outlet, base)), higher)
+        gaping = np.minimum(np.maximum(level, base), higher)
+        found.append(np.maximum(np.where(crack > 0, gaping, shut), _DEEP)[:, None])
+    return found[0], found[1]
 
-    def loss(place: FloatArray, upright: FloatArray, *, beyond: bool) -> FloatArray:
+
+@dataclass(frozen=True)
+class _Walk:
+    """The way of the water along one underside."""
+
+    x: FloatArray
+    z: FloatArray
+    path: SeepagePath
+
+    def loss(self, place: FloatArray, upright: FloatArray, *, beyond: bool) -> FloatArray:
         """Resistance from the flood-side end to a place of the underside."""
-        across = path.horizontal_share if path.creeps else 1.0
-        found = across * place
-        if path.creeps:
-            found = found + max(path.flood_ground - base, 0.0) + upright
-            for where, depth in path.cutoffs:
-                found = found + 2 * depth * ((place >= where) if beyond else (place > where))
+        if not self.path.creeps:
+            return np.asarray(place + 0.0)
+        buried = max(self.path.flood_ground - float(self.z[0]), 0.0)
+        found = self.path.horizontal_share * place + buried + upright
+        for where, depth in self.path.cutoffs:
+            below = depth - self.hanging(where)
+            found = found + 2 * max(below, 0.0) * ((place >= where) if beyond else (place > where))
         return np.asarray(found)
 
-    def uprights(place: FloatArray) -> FloatArray:
+    def hanging(self, where: float) -> float:
+        """Depth of the underside below the base at a place."""
+        line = LineString(np.column_stack([self.x, self.z]))
+        deep = float(self.z.min()) - 1.0
+        cut = line.intersection(LineString([(where, deep), (where, float(self.z.max()) + 1.0)]))
+        return 0.0 if cut.is_empty else float(self.z[0]) - cut.bounds[1]
+
+    def uprights(self, place: FloatArray) -> FloatArray:
         """Upright contact passed before a place on a level run."""
         found = np.zeros(place.shape)
-        for i in range(len(x) - 1):
-            found = found + np.where(place > x[i], 1.0, 0.0) * _part_of(x, z, i, place)
+        for i in range(len(self.x) - 1):
+            found = found + np.where(place > self.x[i], 1.0, 0.0) * _part_of(self.x, self.z, i, place)
         return found
 
-    tips = cracks.heel[:, None], width - cracks.toe[:, None]
-    here = sum(abs(z[i + 1] - z[i]) for i in range(edge)) + abs(z[edge + 1] - z[edge]) * share
-    begin = np.where(cracked[0][:, None], loss(tips[0], uprights(tips[0]), beyond=False), 0.0)
-    whole = loss(np.array([[width]]), np.array([[np.abs(np.diff(z)).sum()]]), beyond=True)
-    whole = whole + (max(path.protected_ground - base, 0.0) if path.creeps else 0.0)
-    finish = np.where(cracked[1][:, None], loss(tips[1], uprights(tips[1]), beyond=True), whole)
+    def whole(self) -> FloatArray:
+        """Resistance from end to end."""
+        width, upright = self.x[-1] - self.x[0], np.abs(np.diff(self.z)).sum()
+        found = self.loss(np.array([[width]]), np.array([[upright]]), beyond=True)
+        return found + (max(self.path.protected_ground - self.z[0], 0.0) if self.path.creeps else 0.0)
 
-    def falling(
-        at: FloatArray, first: FloatArray, last: FloatArray, upper: FloatArray, lower: FloatArray
-    ) -> FloatArray:
-        reach = np.where(last > first, last - first, 1.0)
-        return np.asarray(upper + (lower - upper) * np.clip((at - first) / reach, 0, 1))
 
-    at = loss(spot, here, beyond=False)
-    head = falling(at, begin, finish, at_heel, at_toe)
-    if path.drain is not None:
-        where, kind, figure = path.drain
-        place = np.array([[where]])
-        drained = loss(place, uprights(place), beyond=False)
-        if kind == "effectiveness":
-            bare = falling(drained, begin, finish, at_heel, at_toe)
-            kept = at_toe + (1 - figure) * (bare - at_toe)
-        else:
-            kept = at_toe + figure * (at_heel - at_toe)
-        split = np.where(
-            spot < where,
-            falling(at, begin, drained, at_heel, kept),
-            falling(at, drained, finish, kept, at_toe),
-        )
-        head = np.where((where > tips[0]) & (where < tips[1]), split, head)
-    return np.where(spot < tips[0], at_heel, np.where(spot > tips[1], at_toe, head))
+def _falling(
+    at: FloatArray, first: FloatArray, last: FloatArray, upper: FloatArray, lower: FloatArray
+) -> FloatArray:
+    reach = np.where(last > first, last - first, 1.0)
+    return np.asarray(upper + (lower - upper) * np.clip((at - first) / reach, 0, 1))
 
 
 def _part_of(x: FloatArray, z: FloatArray, i: int, place: FloatArray) -> FloatArray:

@@ -73,7 +73,8 @@ def weighted_creep_ratio(vertical: FloatArray, horizontal: FloatArray, head: Flo
     array([5.417])
     """
     length = vertical + horizontal / 3
-    return np.asarray(np.divide(length, head, out=np.full_like(head, np.inf), where=head > 0))
+    with np.errstate(over="ignore"):
+        return np.asarray(np.divide(length, head, out=np.full_like(head, np.inf), where=head > 0))
 
 
 def critical_gradient(submerged_unit_weight: FloatArray, water_unit_weight: FloatArray) -> FloatArray:

@@ -5,8 +5,8 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from loads.wall.forces import Ground, Waters
+from loads.wall.seepage_path import SeepagePath
 from loads.wall.sliding import Friction
-from loads.wall.uplift import SeepagePath
 
 
 @dataclass(frozen=True, kw_only=True)

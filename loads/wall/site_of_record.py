@@ -7,9 +7,9 @@ import math
 from loads.quantity import Quantity
 from loads.records.wall import Wall
 from loads.wall.forces import Ground, Waters
+from loads.wall.seepage_path import SeepagePath
 from loads.wall.site import Site
 from loads.wall.sliding import Friction
-from loads.wall.uplift import SeepagePath
 from loads.water import Fluid
 
 

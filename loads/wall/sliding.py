@@ -62,7 +62,8 @@ def sliding_factor(
     resisting = resisting + np.where(driving > 0, passive, 0.0)
     force = np.abs(driving)
     shape = np.broadcast(resisting, force).shape
-    return np.asarray(np.divide(resisting, force, out=np.full(shape, np.inf), where=force > 0))
+    with np.errstate(over="ignore"):
+        return np.asarray(np.divide(resisting, force, out=np.full(shape, np.inf), where=force > 0))
 
 
 @dataclass(frozen=True, kw_only=True)

@@ -127,8 +127,6 @@ def stability(section: Section, levels: Levels, site: Site) -> Stability:
     vertical = vertical + lift.push.vertical
     moment = moment + lift.push.moment_horizontal + lift.push.moment_vertical
     base = base_pressure(-vertical, moment, section.base_width)
-    resisting = soil_forces([push for push in soil if push.passive], section.base)
-    passive = nil - sum((row.value for row in resisting), nil)
     width = np.broadcast_to(section.base_width, nil.shape)
     bonded = base.compressed * width if site.opens else width
     return Stability(
@@ -142,21 +140,40 @@ def stability(section: Section, levels: Levels, site: Site) -> Stability:
         cracks=cracks,
         settled=settled,
         runs_through=base.compressed <= 0,
-        sliding=sliding_band(
-            "base",
-            site.base_friction,
-            normal=-vertical,
-            dry_normal=lift.push.vertical - vertical,
-            driving=horizontal - lift.push.horizontal + passive,
-            passive=passive,
-            length=bonded,
-            width=width,
+        sliding=_base_sliding(
+            section, site, soil, lift, horizontal=horizontal, vertical=vertical, bonded=bonded
         ),
         key_sliding=key_sliding(
             section, levels, site, soil=soil, forces=forces, bonded=bonded, cracks=cracks
         ),
         ratios=moment_ratios(forces, horizontal, width),
         flotation=_flotation(forces),
+    )
+
+
+def _base_sliding(
+    section: Section,
+    site: Site,
+    soil: Sequence[SoilPush],
+    lift: Uplift,
+    *,
+    horizontal: FloatArray,
+    vertical: FloatArray,
+    bonded: FloatArray,
+) -> SlidingBand:
+    """Sliding on the base; water on the faces of a key presses below that plane and is left out."""
+    nil = np.zeros_like(vertical)
+    resisting = soil_forces([push for push in soil if push.passive], section.base)
+    passive = nil - sum((row.value for row in resisting), nil)
+    return sliding_band(
+        "base",
+        site.base_friction,
+        normal=-vertical,
+        dry_normal=lift.push.vertical - vertical,
+        driving=horizontal - lift.push.horizontal + passive,
+        passive=passive,
+        length=bonded,
+        width=np.broadcast_to(section.base_width, nil.shape),
     )
 
 
@@ -191,7 +208,8 @@ def moment_ratios(forces: Sequence[Force], horizontal: FloatArray, width: FloatA
 
 
 def _over(top: FloatArray, bottom: FloatArray) -> FloatArray:
-    return np.divide(top, bottom, out=np.full_like(top, np.inf), where=bottom > 0)
+    with np.errstate(over="ignore"):
+        return np.divide(top, bottom, out=np.full_like(top, np.inf), where=bottom > 0)
 
 
 def _flotation(forces: tuple[Force, ...]) -> FloatArray:

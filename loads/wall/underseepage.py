@@ -15,7 +15,7 @@ from loads.wall.seepage import (
     exit_gradient_layer,
     weighted_creep_ratio,
 )
-from loads.wall.uplift import SeepagePath, end_heads
+from loads.wall.seepage_path import SeepagePath, cutoff_reach, end_heads
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -87,21 +87,23 @@ def underseepage(
     )
     base = section.base
     head_in, head_out = end_heads(creeping, base, levels.flood_side, levels.protected_side)
-    both = np.isfinite(head_in) & np.isfinite(head_out)
-    head = np.where(both, np.abs(np.where(both, head_in, 0.0) - np.where(both, head_out, 0.0)), 0.0)
+    wet = np.isfinite(head_in) & np.isfinite(head_out)
+    head = np.abs(np.where(wet, head_in, 0.0) - np.where(wet, head_out, 0.0))
     x, z = section.chain("base")
     run, drop = np.abs(np.diff(x, axis=1)), np.abs(np.diff(z, axis=1))
     steep = drop > run
     length = np.hypot(run, drop)
     states = levels.states
     buried = [np.maximum(ground - base, 0.0) for ground in (path.flood_ground, path.protected_ground)]
-    cutoffs = 2 * sum(depth for _, depth in path.cutoffs)
+    reaches = [cutoff_reach((x, z), place, depth, base) for place, depth in path.cutoffs]
+    cutoffs = 2 * sum(reaches, np.zeros(len(x)))
     vertical = np.where(steep, length, 0.0).sum(axis=1) + buried[0] + buried[1] + cutoffs
     horizontal = np.where(steep, 0.0, length).sum(axis=1)
     reverse = levels.protected_side > levels.flood_side
     depth = np.where(reverse, _end_depth(section, path, "flood"), _end_depth(section, path, "protected"))
     floor = np.broadcast_to(section.base_width, (states,))
-    weight = np.array([ground_unit_weight - water_unit_weight])
+    water = np.array([water_unit_weight])
+    critical = critical_gradient(ground_unit_weight - water, water)
     return Underseepage(
         head=head,
         vertical=np.broadcast_to(vertical, (states,)),
@@ -110,9 +112,7 @@ def underseepage(
         floor=floor,
         exit_depth=depth,
         exit_gradient=exit_gradient_floor(head, floor, depth),
-        critical_gradient=np.broadcast_to(
-            critical_gradient(weight, np.array([water_unit_weight])), (states,)
-        ),
+        critical_gradient=np.full(states, critical.item()),
     )
 
 

@@ -8,37 +8,7 @@ import numpy as np
 
 from loads.arrays import FloatArray
 from loads.wall.pressing import Push, push_on_edges
-
-
-@dataclass(frozen=True, kw_only=True)
-class SeepagePath:
-    """How head is lost between the two sides; one for all states.
-
-    Attributes
-    ----------
-    rule
-        "linear", "line of creep" or "none".
-    horizontal_share
-        What a horizontal length counts for beside a vertical one, on a line of creep. [–]
-    flood_ground, protected_ground
-        Elevations of the ground. [m]
-    cutoffs
-        Distance from the heel and depth below the base of each. [m]
-    drain
-        Distance from the heel, kind ("effectiveness" or "remaining_share") and figure; or None.
-    """
-
-    rule: str
-    horizontal_share: float
-    flood_ground: float
-    protected_ground: float
-    cutoffs: tuple[tuple[float, float], ...] = ()
-    drain: tuple[float, str, float] | None = None
-
-    @property
-    def creeps(self) -> bool:
-        """True on a line of creep."""
-        return self.rule == "line of creep"
+from loads.wall.seepage_path import SeepagePath, cutoff_reach
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -74,39 +44,6 @@ class Uplift:
     push: Push
 
 
-def end_heads(
-    path: SeepagePath, base: FloatArray, flood_level: FloatArray, protected_level: FloatArray
-) -> tuple[FloatArray, FloatArray]:
-    """Total head at both ends of the seepage path.
-
-    Parameters
-    ----------
-    path
-        The rule.
-    base
-        Elevation of the base, shape (n,) or (1,). [m]
-    flood_level, protected_level
-        Shape (n,); minus infinity where dry. [m]
-
-    Returns
-    -------
-    tuple of FloatArray
-        Flood-side and protected-side head, shape (n,); minus infinity where neither side has water. [m]
-
-    Notes
-    -----
-    At a dry end water leaves at the ground of a line of creep, at the base's corner by the linear rule: there
-    the head is its elevation, but never more than the level of the other side.
-    """
-    higher = np.maximum(flood_level, protected_level)
-    outlets = [base, base]
-    if path.creeps:
-        outlets = [np.maximum(ground, base) for ground in (path.flood_ground, path.protected_ground)]
-    flood = np.minimum(np.maximum(flood_level, outlets[0]), higher)
-    protected = np.minimum(np.maximum(protected_level, outlets[1]), higher)
-    return np.asarray(flood), np.asarray(protected)
-
-
 def uplift(
     path: SeepagePath,
     corners: tuple[FloatArray, FloatArray],
@@ -115,6 +52,7 @@ def uplift(
     open_heads: tuple[FloatArray, FloatArray],
     unit_weight: float,
     cracks: Cracks,
+    datum: FloatArray,
 ) -> Uplift:
     """Pressure on the underside and its sum, moments about the toe.
 
@@ -132,6 +70,8 @@ def uplift(
         Weight per volume of the water. [N/m³]
     cracks
         Open lengths. A crack that reaches a cutoff or drain puts it out of use.
+    datum
+        Elevation from which the depths of cutoffs count, (m,) or (1,). [m]
 
     Notes
     -----
@@ -157,15 +97,9 @@ def uplift(
     )
     at_x, at_z, resistance = _positions(path, x, z, along, stations)
     middle = (stations[:, 1:] + stations[:, :-1]) / 2
-    passed = np.stack([resistance[:, :-1], resistance[:, 1:]])
-    total = resistance[:, -1]
-    if path.creeps:
-        buried_in = np.maximum(path.flood_ground - base[:, 0], 0.0)
-        total = total + buried_in + np.maximum(path.protected_ground - base[:, 0], 0.0)
-        passed = passed + buried_in[:, None]
-        for (_, depth), place in zip(path.cutoffs, places[2:], strict=False):
-            passed = passed + 2 * depth * (middle > place)
-            total = total + 2 * depth
+    reaches = [cutoff_reach(corners, place, depth, datum) for place, depth in path.cutoffs]
+    cutoffs = list(zip(places[2:], reaches, strict=False))
+    passed, total = _resistances(path, base[:, 0], resistance, middle, cutoffs)
     ends = _Ends(tip_in=places[0], tip_out=places[1], middle=middle, total=total, cracks=cracks)
     drain = places[-1] if path.drain else None
     head = _heads(path, passed, ends, heads=(head_in, head_out), open_heads=(open_in, open_out), drain=drain)
@@ -191,6 +125,26 @@ class _Ends:
     middle: FloatArray
     total: FloatArray
     cracks: Cracks
+
+
+def _resistances(
+    path: SeepagePath,
+    base: FloatArray,
+    resistance: FloatArray,
+    middle: FloatArray,
+    cutoffs: list[tuple[FloatArray, FloatArray]],
+) -> tuple[FloatArray, FloatArray]:
+    """Resistance passed at both ends of each run, (2, n, q − 1), and that of the whole path, (n,)."""
+    passed = np.stack([resistance[:, :-1], resistance[:, 1:]])
+    total = resistance[:, -1]
+    if path.creeps:
+        buried_in = np.maximum(path.flood_ground - base, 0.0)
+        total = total + buried_in + np.maximum(path.protected_ground - base, 0.0)
+        passed = passed + buried_in[:, None]
+        for place, reach in cutoffs:
+            passed = passed + 2 * reach[:, None] * (middle > place)
+            total = total + 2 * reach
+    return passed, total
 
 
 def _lengths(x: FloatArray, z: FloatArray) -> FloatArray:

@@ -59,7 +59,8 @@ def factor_check(
     if least is None:
         ratio = np.full(len(factor), np.nan)
     else:
-        ratio = np.divide(least, factor, out=np.full(len(factor), np.inf), where=factor > 0)
+        with np.errstate(over="ignore"):
+            ratio = np.divide(least, factor, out=np.full(len(factor), np.inf), where=factor > 0)
     return Check(
         subject=subject,
         name=name,
@@ -167,7 +168,7 @@ def seepage_checks(wall: Wall, screen: Underseepage, near: float) -> list[Check]
         near=near,
     )
     factor = wall.foundation.exit_gradient_factor
-    with np.errstate(invalid="ignore"):
+    with np.errstate(invalid="ignore", over="ignore"):
         found = np.divide(
             screen.critical_gradient,
             screen.exit_gradient,

@@ -81,7 +81,8 @@ def _rule_remarks(wall: Wall, site: Site) -> list[str]:
         remarks.append("A cutoff takes no head by the linear rule of uplift; the line of creep counts it.")
     if wall.uplift == "line of creep" and wall.ground("protected") > wall.base.value:
         remarks.append(
-            "On the line of creep water leaves at the protected-side ground; pore water of that ground is not "
+            "On the line of creep water leaves at the protected-side ground; pore water of that ground "
+            "is not "
             "counted as resisting unless the protected-side level says so."
         )
     if wall.drain is not None:

@@ -10,9 +10,7 @@ from loads.worked_step import Line, Step, Table, column_sum, line, term
 
 
 def wall_working(result: WallResult, index: int = 0) -> tuple[Step, ...]:
-    """Worked steps of one state: forces, uplift, base pressure, sliding, ratios, "
-    "flotation, seepage, members.
-    """
+    """Worked steps of one state, from the forces to the ratios."""
     steps = [
         _forces(result, index),
         _uplift(result, index),

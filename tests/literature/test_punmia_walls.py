@@ -115,7 +115,8 @@ def test_height_of_a_shutter_without_tension(agree: Agree) -> None:
 
 @pytest.mark.source(
     "PunmiaIrrigation",
-    "published; Ex. 8.20, p. 431: 84 m high, water 80 m and 6 m, base 56 m, drain 8 m from the heel that leaves "
+    "published; Ex. 8.20, p. 431: 84 m high, water 80 m and 6 m, base 56 m, drain 8 m from the heel "
+    "that leaves "
     "a third of the difference",
 )
 def test_uplift_with_a_drain(agree: Agree) -> None:
@@ -155,7 +156,8 @@ def test_high_dam_without_uplift(agree: Agree) -> None:
 
 @pytest.mark.source(
     "PunmiaIrrigation",
-    "published; Ex. 8.16, corrected: the ratio is printed 1.00, the printed moments 1 547 377 and 870 421 give "
+    "published; Ex. 8.16, corrected: the ratio is printed 1.00, the printed moments 1 547 377 and 870 "
+    "421 give "
     "1.78",
 )
 def test_ratio_of_the_printed_moments(agree: Agree) -> None:

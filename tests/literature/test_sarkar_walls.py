@@ -33,7 +33,8 @@ def test_stresses_under_a_trapezoid(agree: Agree) -> None:
 
 @pytest.mark.source(
     "SarkarStrength",
-    "published; Ex. 14.4, p. 329, corrected: printed 500.62 kN, because the transcription squares the unit weight "
+    "published; Ex. 14.4, p. 329, corrected: printed 500.62 kN, because the transcription squares the "
+    "unit weight "
     "in place of the weight",
 )
 def test_resultant_of_weight_and_water(agree: Agree) -> None:
@@ -59,7 +60,8 @@ def test_water_on_a_battered_face(agree: Agree) -> None:
 
 @pytest.mark.source(
     "SarkarStrength",
-    "published; Ex. 14.13, p. 341, corrected: 6 m, top 1 m, base 3 m, soil 18 kN/m³ at 20°, φ 30°, masonry 24 kN/m³; "
+    "published; Ex. 14.13, p. 341, corrected: 6 m, top 1 m, base 3 m, soil 18 kN/m³ at 20°, φ 30°, "
+    "masonry 24 kN/m³; "
     "the transcription takes the triangle at a wrong arm",
 )
 def test_masonry_wall_under_sloping_ground(agree: Agree) -> None:

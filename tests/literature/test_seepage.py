@@ -20,7 +20,8 @@ FLOOR = {"shape": "gravity", "height": "1 m", "unit_weight": "22 kN/m3", "crack"
 
 @pytest.mark.source(
     "PunmiaIrrigation",
-    "published; Ex. 12.1, p. 576: floor 22 m, cutoffs 6 m and 8 m, head 4 m, specific gravity 2.24, line of creep",
+    "published; Ex. 12.1, p. 576: floor 22 m, cutoffs 6 m and 8 m, head 4 m, specific gravity 2.24, "
+    "line of creep",
 )
 def test_uplift_along_a_line_of_creep(agree: Agree) -> None:
     table = FLOOR | {

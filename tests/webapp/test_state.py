@@ -6,8 +6,10 @@ import pytest
 
 from loads.problems import ScenarioError
 from loads.scenario_file import parse_document, read_file
-from webapp import forms, state
+from webapp import barrier_state, forms, state
+from webapp.closure_form import CLOSURE_FORM
 from webapp.links import encode_document
+from webapp.new_barriers import new_closure, new_panel
 from webapp.scenario_files import example_files
 
 
@@ -117,14 +119,14 @@ def test_open_document_refuses_what_is_no_scenario(session: dict[Any, Any]) -> N
 
 
 def test_panels_and_layers_are_added_copied_and_removed(session: dict[Any, Any]) -> None:
-    state.add_panel(session, forms.new_panel(session["document"]))
-    state.copy_panel(session, 2)
+    barrier_state.add_barrier(session, "panel", new_panel(session["document"]))
+    barrier_state.copy_barrier(session, ("panel", 2))
     ids = [panel["id"] for panel in session["document"]["panel"]]
     assert ids == ["P1", "P2", "P3", "P4", "N1", "P3-2"]
     assert session["barrier"] == "P3-2"
-    state.remove_panel(session, 4)
+    barrier_state.remove_barrier(session, ("panel", 4))
     assert [panel["id"] for panel in session["document"]["panel"]] == ["P1", "P2", "P3", "P4", "P3-2"]
-    fewer = state.with_layer(session["document"], 2, 0, None)
+    fewer = barrier_state.with_layer(session["document"], ("panel", 2), 0, None)
     assert "sediment" not in fewer["panel"][2]
     assert "sediment" in session["document"]["panel"][2], "the document itself is not touched"
 
@@ -139,7 +141,7 @@ def test_text_of_the_document_reads_back_as_the_same_document(session: dict[Any,
 @pytest.mark.parametrize("path", example_files(), ids=lambda path: path.stem)
 def test_an_untouched_form_changes_nothing(path: Any) -> None:
     document = read_file(path)
-    for panel in document["panel"]:
+    for panel in document.get("panel", []):
         shape = panel.get("shape", "rectangle")
         for name in ("id", "name", "bottom", *forms.SHAPE_FIELDS[shape]):
             before = panel.get(name)
@@ -150,6 +152,79 @@ def test_an_untouched_form_changes_nothing(path: Any) -> None:
                 assert (
                     forms.typed_value(forms.field_of("sediment", name), forms.shown(before), before) == before
                 )
+
+
+@pytest.mark.parametrize("path", example_files(), ids=lambda path: path.stem)
+def test_an_untouched_form_of_a_closure_changes_nothing(path: Any) -> None:
+    for closure in read_file(path).get("closure", []):
+        changed = closure
+        for part in CLOSURE_FORM:
+            table = forms.table_at(closure, part.path)
+            kept = {}
+            for name in part.asked:
+                field = forms.field_of(part.record_name, name)
+                value = forms.typed_value(field, forms.shown(table.get(name), field.kind), table.get(name))
+                if forms.has_pedigree(part.record_name, field):
+                    value = forms.with_pedigree(value, *forms.pedigree_shown(table.get(name)))
+                kept[name] = value
+            changed = forms.with_table(changed, part.path, kept)
+        assert changed == closure
+
+
+def test_the_form_of_a_closure_asks_every_field_of_its_record() -> None:
+    asked = {(part.record, name) for part in CLOSURE_FORM for name in part.asked}
+    tables = {
+        (part.record, name)
+        for part in CLOSURE_FORM
+        for name, info in part.record.model_fields.items()
+        if any(other.path == (*part.path, name) for other in CLOSURE_FORM)
+    }
+    for part in CLOSURE_FORM:
+        missing = {name for name in part.record.model_fields if (part.record, name) not in asked | tables}
+        assert missing <= {"sediment", "drill"}, (part.record, missing)
+
+
+def test_fields_of_a_closure_are_read_as_the_file_has_them() -> None:
+    def read(record: str, name: str, text: str) -> object:
+        return forms.typed_value(forms.field_of(record, name), text, None)
+
+    assert read("closure", "logs_in_place", "9, 9, 10") == [9, 9, 10]
+    assert read("closure", "logs_in_place", "9") == 9
+    assert read("closure", "logs_in_place", "nine") == "nine", "the record says what is wrong with it"
+    assert read("closure", "bay_widths", "8 ft, 7 ft 6 in") == ["8 ft", "7 ft 6 in"]
+    assert read("closure", "parts_short", "one clamp, bent\n\ntwo seals") == ["one clamp, bent", "two seals"]
+    assert read("closure.guide", "one_way", "yes") is True
+    assert read("closure.log", "fills_with_water", "no") is False
+    assert read("closure.anchor", "tension_bolts", "2") == 2
+    assert "aluminium 6061-T6" in forms.field_of("closure.log", "material").choices
+
+
+def test_a_table_that_is_emptied_goes_and_one_that_was_empty_stays() -> None:
+    closure = {"id": "C", "post": {"brace": {"height": "4 ft"}}, "guide": {}}
+    assert forms.with_table(closure, ("post", "brace"), {"height": None}) == {"id": "C", "guide": {}}
+    assert forms.with_table(closure, ("guide",), {"friction": None}) == closure
+    assert forms.with_table(closure, ("seal",), {"rate": None}) == closure
+    assert forms.with_table(closure, ("log", "section"), {"thickness": "3 in"})["log"] == {
+        "section": {"thickness": "3 in"}
+    }
+
+
+def test_a_closure_begun_is_a_scenario_and_its_logs_move_within_those_on_hand(
+    session: dict[Any, Any],
+) -> None:
+    barrier_state.add_barrier(session, "closure", new_closure(session["document"]))
+    place = barrier_state.place_of(session["document"], session["barrier"])
+    assert place == ("closure", 0)
+    assert not barrier_state.can_move_logs(session["document"], place, +1), "all eight are in place"
+    for _ in range(9):
+        barrier_state.move_logs(session, place, -1)
+    assert session["document"]["closure"][0]["logs_in_place"] == 0
+    assert not barrier_state.can_move_logs(session["document"], place, -1)
+    session["document"]["closure"][0] |= {"bays": 2, "logs_in_place": [7, 8]}
+    barrier_state.move_logs(session, place, +1)
+    assert session["document"]["closure"][0]["logs_in_place"] == [8, 8]
+    barrier_state.remove_barrier(session, place)
+    assert "closure" not in session["document"]
 
 
 def test_a_changed_value_drops_the_pedigree_of_the_old_one() -> None:

@@ -7,11 +7,13 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from loads.assessment import Assessed, Assessment, Withheld
+from loads.assessment import Assessed, AssessedClosure, Assessment, Barrier, Withheld
 from loads.recheck import FITTED_TOLERANCE, STRAIGHT_TOLERANCE
+from loads.records.closure import Closure
 from loads.worked_step import Step, Term
 from loads.working import working
 from webapp.display import PRINT_DIGITS, System, barrier_title, elevation
+from webapp.package.closure import ClosureView, closure_checks, closure_view
 from webapp.package.drawings import Drawing, section_drawing
 from webapp.package.grid import Grid, Heading, grid_of, words
 from webapp.package.states import State
@@ -49,6 +51,7 @@ class BarrierView:
     """Everything of a barrier whose two computations agree."""
 
     id: str
+    kind: str
     title: str
     verdict: str
     note: str
@@ -62,6 +65,7 @@ class BarrierView:
     steps: tuple[StepView, ...]
     second: Grid
     tolerance: str
+    closure: ClosureView | None
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -69,26 +73,33 @@ class WithheldView:
     """A withheld barrier: the word and the two figures that disagree."""
 
     id: str
+    kind: str
     title: str
     verdict: str
     note: str
     drawing: Drawing
+    words: str
     second: Grid
 
 
 def withheld_view(barrier: Withheld, system: System, datum: str) -> WithheldView:
     """Text of a withheld barrier."""
-    names = (("horizontal force H", "force"), ("moment about the bottom edge M", "moment"))
+    foot = foot_of(barrier)
+    names = (("horizontal force H", "force"), (f"moment about the {foot} M", "moment"))
+    if barrier.subject:
+        names = ((f"{barrier.subject}, force", "force"), (f"{barrier.subject}, moment", "moment"))
     rows = tuple(
         _pair(name, kind, both, system, DISAGREEMENT_DIGITS)
         for (name, kind), both in zip(names, zip(barrier.first, barrier.second, strict=True), strict=True)
     )
     return WithheldView(
         id=barrier.record.id,
+        kind=barrier.record.kind,
         title=barrier_title(barrier.record.id, barrier.record.name),
         verdict=barrier.verdict(),
         note=barrier.record.note,
         drawing=section_drawing(barrier, system, datum),
+        words=f"{barrier.subject or barrier.record.kind}",
         second=Grid(headings=_second_headings(), rows=rows),
     )
 
@@ -108,23 +119,43 @@ def barrier_view(barrier: Assessed, many: Assessment, states: list[State], datum
         Of every elevation.
     """
     system = many.scenario.units
-    panel = barrier.record
+    record = barrier.record
+    closure = None
+    if isinstance(barrier, AssessedClosure):
+        in_all = many.barrier(record.id)
+        assert isinstance(in_all, AssessedClosure)
+        closure = closure_view(barrier, in_all, states, system, datum)
+        checks = closure_checks(barrier, system, datum)
+    else:
+        checks = checks_grid(barrier, system, datum)
     return BarrierView(
-        id=panel.id,
-        title=barrier_title(panel.id, panel.name),
+        id=record.id,
+        kind=record.kind,
+        title=barrier_title(record.id, record.name),
         verdict=barrier.verdict(),
-        note=panel.note,
+        note=record.note,
         facts=_facts(barrier, system, datum),
         drawing=section_drawing(barrier, system, datum),
         remarks=barrier.remarks,
-        checks=checks_grid(barrier, system, datum),
+        checks=checks,
         levels=level_rows(barrier, system, datum),
-        states=states_grid(many, panel.id, states, system, datum),
+        states=states_grid(many, record.id, states, system, datum),
         loads=_by_load(barrier, system),
         steps=tuple(step_view(step, system, datum) for step in working(barrier)),
         second=_second(barrier, system),
-        tolerance=tiny(FITTED_TOLERANCE if panel.shape in ("circle", "arc") else STRAIGHT_TOLERANCE),
+        tolerance=tiny(FITTED_TOLERANCE if fitted(barrier) else STRAIGHT_TOLERANCE),
+        closure=closure,
     )
+
+
+def fitted(barrier: Assessed) -> bool:
+    """Whether the second computation of a face is one of a fitted shape."""
+    return barrier.setting.panel.shape in ("circle", "arc")
+
+
+def foot_of(barrier: Barrier) -> str:
+    """What moments of a barrier are about."""
+    return "sill" if isinstance(barrier.record, Closure) else "bottom edge"
 
 
 def _facts(barrier: Assessed, system: System, datum: str) -> tuple[tuple[str, str], ...]:
@@ -135,7 +166,7 @@ def _facts(barrier: Assessed, system: System, datum: str) -> tuple[tuple[str, st
         ("Horizontal force H, toward the protected side", float(found.horizontal[0]), "force"),
         ("Vertical force V, up", float(found.vertical[0]), "force"),
         ("Total force on the face", float(found.total[0]), "force"),
-        ("Moment M about the bottom edge", float(found.moment[0]), "moment"),
+        (f"Moment M about the {foot_of(barrier)}", float(found.moment[0]), "moment"),
     )
     scale = _scale(barrier)
     return (
@@ -191,7 +222,7 @@ def _second(barrier: Assessed, system: System) -> Grid:
     quantities = (
         ("horizontal force H", "force", first.horizontal, second.horizontal),
         ("vertical force V", "force", first.vertical, second.vertical),
-        ("moment about the bottom edge M", "moment", first.moment, second.moment),
+        (f"moment about the {foot_of(barrier)} M", "moment", first.moment, second.moment),
     )
     rows = tuple(
         _pair(name, kind, (_clean(float(one[0]), scale), _clean(float(other[0]), scale)), system)

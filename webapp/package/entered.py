@@ -8,13 +8,12 @@ from datetime import date, datetime
 
 from loads.quantity import Quantity
 from loads.records.base import Record
-from loads.records.panel import Panel
 from loads.records.scenario import Scenario, zone_name
 from webapp.display import barrier_title, show
 
 NO_SOURCE = "no source stated"
 _ON_COVER = ("format", "title", "location", "purpose", "author", "revision", "status")
-_HELD_APART = ("water", "panel")
+_HELD_APART = ("water", "panel", "closure")
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -47,14 +46,17 @@ def entry_groups(scenario: Scenario) -> list[EntryGroup]:
     general = [entry for entry in _entries(scenario, "") if entry.label not in _ON_COVER]
     groups = [("General", general), ("Water", list(_entries(scenario.water, "")))]
     groups += [
-        (f"Panel {barrier_title(panel.id, panel.name)}", list(_panel_entries(panel)))
-        for panel in scenario.panel
+        (
+            f"{record.kind.capitalize()} {barrier_title(record.id, record.name)}",
+            list(_barrier_entries(record)),
+        )
+        for record in scenario.barriers
     ]
     return [EntryGroup(title=title, entries=tuple(entries)) for title, entries in groups]
 
 
-def _panel_entries(panel: Panel) -> Iterator[Entry]:
-    for entry in _entries(panel, ""):
+def _barrier_entries(record: Record) -> Iterator[Entry]:
+    for entry in _entries(record, ""):
         if entry.label not in ("id", "name"):
             yield entry
 

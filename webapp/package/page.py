@@ -25,11 +25,13 @@ from webapp.package.barrier import (
     barrier_view,
     withheld_view,
 )
+from webapp.package.closure import CLOSURE_ASSUMPTIONS
 from webapp.package.drawings import flood_line_drawing
 from webapp.package.entered import entry_groups, taken
 from webapp.package.grid import Grid, Heading, words
 from webapp.package.states import levels_of_states, package_states
-from webapp.package.tables import RESULT_DIGITS, bare, ratio_text
+from webapp.package.tables import RESULT_DIGITS, bare, largest_ratio, ratio_text
+from webapp.part_words import check_title
 from webapp.step_text import figure, unit_of, with_unit
 
 SHEETS: dict[System, str] = {"US": "letter", "SI": "A4"}
@@ -136,7 +138,7 @@ def _stated(scenario: Scenario) -> dict[str, Any]:
     return {
         "groups": entry_groups(scenario),
         "taken": taken(scenario),
-        "assumptions": ASSUMPTIONS,
+        "assumptions": (*ASSUMPTIONS, *(CLOSURE_ASSUMPTIONS if scenario.closure else ())),
         "not_counted": NOT_COUNTED,
         "methods": METHODS,
         "references": _references(),
@@ -180,14 +182,15 @@ def _summary(assessment: Assessment) -> Grid:
 
 
 def _summary_row(barrier: Barrier, system: System) -> tuple[str, ...]:
-    panel = barrier.record
-    name = barrier_title(panel.id, panel.name)
-    rated = _bare(panel.rated_level.value, system) if panel.rated_level else "–"
+    record = barrier.record
+    name = barrier_title(record.id, record.name)
+    rated = _bare(record.rated_level.value, system) if record.rated_level else "–"
     if not isinstance(barrier, Assessed):
-        return (name, _bare(panel.bottom.value, system), *("–",) * 6, rated, "–", barrier.verdict())
+        bottom = barrier.setting.panel.bottom.value
+        return (name, _bare(bottom, system), *("–",) * 6, rated, "–", barrier.verdict())
     found, face = barrier.resultant, barrier.face
-    limited = [check for check in barrier.checks if check.limit is not None]
-    ratio = ratio_text(float(limited[0].ratio[0])) if limited else "–"
+    column = largest_ratio(barrier, 0)
+    check = None if column is None else barrier.checks[column]
     first = barrier.first_limit.level if barrier.first_limit else None
     return (
         name,
@@ -196,8 +199,8 @@ def _summary_row(barrier: Barrier, system: System) -> tuple[str, ...]:
         figure(float(found.horizontal[0]), "force", system, RESULT_DIGITS),
         figure(float(found.moment[0]), "moment", system, RESULT_DIGITS),
         _bare(float(found.line_of_action[0]), system),
-        ratio,
-        limited[0].name if limited else "–",
+        ratio_text(float(check.ratio[0]), check.kind) if check else "–",
+        check_title(check, record.kind) if check else "–",
         rated,
         "–" if first is None else _bare(first, system),
         barrier.verdict(),
@@ -212,12 +215,12 @@ def _bare(level: float, system: System) -> str:
 def _governing(many: Assessment, names: list[str]) -> list[str]:
     """Which check has the largest ratio, at the entered levels and over all states."""
     found = [
-        (float(ratio), i, barrier.record.id, check.name)
+        (float(barrier.checks.ratio[i, column]), i, barrier, column)
         for barrier in many.barriers
         if isinstance(barrier, Assessed)
-        for check in barrier.checks
-        for i, ratio in enumerate(check.ratio)
-        if not math.isnan(ratio)
+        for i in range(len(names))
+        for column in (largest_ratio(barrier, i),)
+        if column is not None
     ]
     if not found and any(isinstance(barrier, Withheld) for barrier in many.barriers):
         return ["Results are withheld, so no ratio is given."]
@@ -225,9 +228,15 @@ def _governing(many: Assessment, names: list[str]) -> list[str]:
         return ["No limit was entered for any barrier, so nothing governs."]
     now = max((item for item in found if item[1] == 0), key=lambda item: item[0])
     ever = max(found, key=lambda item: item[0])
-    first = f"Largest ratio at the levels entered: {ratio_text(now[0])}, panel {now[2]}, {now[3]}."
-    most = f"Largest ratio of all states computed: {ratio_text(ever[0])}, panel {ever[2]}, {ever[3]}"
+    first = f"Largest ratio at the levels entered: {_ratio_words(*now[2:], now[1])}."
+    most = f"Largest ratio of all states computed: {_ratio_words(*ever[2:], ever[1])}"
     return [first, f"{most}, state “{names[ever[1]]}”."]
+
+
+def _ratio_words(barrier: Assessed, column: int, index: int) -> str:
+    check, record = barrier.checks[column], barrier.record
+    ratio = ratio_text(float(check.ratio[index]), check.kind)
+    return f"{ratio}, {record.kind} {record.id}, {check_title(check, record.kind)}"
 
 
 def _fluids(assessment: Assessment) -> Grid:

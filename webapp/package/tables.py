@@ -4,6 +4,8 @@ from __future__ import annotations
 
 import math
 
+import numpy as np
+
 from loads.arrays import FloatArray
 from loads.assessment import Assessed, Assessment, Withheld
 from loads.checks import Check
@@ -23,10 +25,11 @@ def checks_grid(barrier: Assessed, system: System, datum: str) -> Grid:
         Heading(text=text, words=text not in ("demand", "limit", "ratio"))
         for text in ("check", "demand", "limit", "ratio", "verdict", "source of the limit", "remarks")
     )
-    return Grid(headings=headings, rows=tuple(_check_row(check, system, datum) for check in barrier.checks))
+    return Grid(headings=headings, rows=tuple(check_cells(check, system, datum) for check in barrier.checks))
 
 
-def _check_row(check: Check, system: System, datum: str) -> tuple[str, ...]:
+def check_cells(check: Check, system: System, datum: str) -> tuple[str, ...]:
+    """Name, demand, limit, ratio, verdict, source and remarks of a check."""
     demand = float(check.demand[0])
     if check.kind == "elevation":
         shown = f"water at {elevation(demand, system, datum)}"
@@ -34,24 +37,25 @@ def _check_row(check: Check, system: System, datum: str) -> tuple[str, ...]:
         if check.name == "freeboard" and check.limit is not None:
             limit = f"{check.limit.text} to the top: {limit}"
     else:
-        shown = with_unit(demand, check.kind, system, RESULT_DIGITS)
-        limit = with_unit(check.limit_value, check.kind, system, RESULT_DIGITS)
+        kind = "deflection" if "deflection" in check.name else check.kind
+        shown = with_unit(demand, kind, system, RESULT_DIGITS)
+        limit = with_unit(check.limit_value, kind, system, RESULT_DIGITS)
     ratio = float(check.ratio[0])
     return (
         check.name,
         shown,
         limit if check.limit is not None else "none entered",
-        ratio_text(ratio),
+        ratio_text(ratio, check.kind),
         check.verdict(),
         check.source if check.limit is not None else "–",
         " ".join(check.remarks) or "–",
     )
 
 
-def ratio_text(ratio: float) -> str:
+def ratio_text(ratio: float, kind: str = "elevation") -> str:
     """Ratio with three figures, with more where it would read as one and is not; a dash without a limit."""
     if math.isinf(ratio):
-        return "limit below the bottom edge"
+        return "limit below the bottom edge" if kind == "elevation" else "none allowed"
     if not math.isfinite(ratio):
         return "–"
     digits = 3
@@ -111,7 +115,7 @@ def states_grid(many: Assessment, barrier_id: str, states: list[State], system: 
             rows.append((state.name, *sides, *("–",) * 5, barrier.verdict()))
             continue
         force, moment = barrier.resultant.horizontal, barrier.resultant.moment
-        ratios = [float(check.ratio[i]) for check in barrier.checks if not math.isnan(float(check.ratio[i]))]
+        column = largest_ratio(barrier, i)
         rows.append(
             (
                 state.name,
@@ -120,11 +124,19 @@ def states_grid(many: Assessment, barrier_id: str, states: list[State], system: 
                 _change(force, i),
                 figure(float(moment[i]), "moment", system, RESULT_DIGITS),
                 _change(moment, i),
-                ratio_text(max(ratios)) if ratios else "–",
+                "–"
+                if column is None
+                else ratio_text(float(barrier.checks.ratio[i, column]), barrier.checks[column].kind),
                 barrier.verdict(i),
             )
         )
     return Grid(headings=headings, rows=tuple(rows))
+
+
+def largest_ratio(barrier: Assessed, index: int) -> int | None:
+    """Which check has the largest ratio in a state; None when nothing is checked."""
+    ratios = np.where(barrier.checks.severity[index] > 0, barrier.checks.ratio[index], np.nan)
+    return None if np.isnan(ratios).all() else int(np.nanargmax(ratios))
 
 
 def bare(level: float, system: System) -> str:

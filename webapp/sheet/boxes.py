@@ -9,10 +9,10 @@ from dataclasses import dataclass
 from loads.records.scenario import Scenario
 from webapp.display import age_text, elevation, moment_text
 from webapp.sheet.plan import CALL_BELOW, Plan
-from webapp.sheet.words import length_text, plural, source_words, span_text
+from webapp.sheet.words import above_sill, plural, source_words, span_text
 
-TIMES = ("Owner told at", "Call out by", "Start by", "Closed by")
-"""Times that nobody computes here yet; they are written in by hand."""
+TIMES = ("Owner told at", "Call out by", "Start by", "Closed by", "Staff reads")
+"""What is written in by hand: times that nobody computes here yet, and the reading at the closure."""
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -36,6 +36,8 @@ def _fit_box(plan: Plan) -> Box:
     lines = [f"logs in each bay, {plural(len(plan.fit), 'bay')}"]
     if max(plan.fit) > 0:
         lines.append(f"top {' to '.join(shown)}")
+        if len(tops) == 1:
+            lines.append(above_sill(tops[0] - plan.sill, plan.system))
     else:
         lines.append("the level asks for no log yet")
     alarm = ""
@@ -52,12 +54,7 @@ def _short_bays(plan: Plan) -> str:
 
 def _water_box(plan: Plan, scenario: Scenario, now: dt.datetime | None) -> Box:
     above = plan.water - plan.sill
-    head = (
-        f"{length_text(above, plan.system)} on the sill"
-        if above > 0
-        else f"{length_text(-above, plan.system)} below the sill"
-    )
-    lines = [head, *_age_lines(scenario.water.as_of, now)]
+    lines = [above_sill(above, plan.system), *_age_lines(scenario.water.as_of, now)]
     alarm = ""
     if math.isfinite(plan.protected) and plan.protected > max(plan.water, plan.sill):
         alarm = "higher on the protected side"
@@ -68,7 +65,9 @@ def _water_box(plan: Plan, scenario: Scenario, now: dt.datetime | None) -> Box:
 
 def _age_lines(as_of: dt.datetime | None, now: dt.datetime | None) -> list[str]:
     if as_of is None:
-        return ["no time entered; read at ___ : ___"]
+        return ["no time entered"]
+    if now is not None and now < as_of:
+        return [moment_text(as_of), "later than the time of printing"]
     age = [] if now is None else [f"{age_text(as_of, now)} when printed"]
     return [moment_text(as_of), *age]
 
@@ -82,6 +81,10 @@ def _call_box(plan: Plan) -> Box:
             lines=("No rated level entered: ask the engineer for it before water is on the sill.",),
         )
     below = CALL_BELOW[plan.system][0]
-    lines = (f"{below} below the rated level {elevation(rated.value, plan.system)}", source_words(rated, 26))
+    lines = (
+        above_sill(call - plan.sill, plan.system),
+        f"{below} below the rated level {elevation(rated.value, plan.system)}",
+        source_words(rated, 26),
+    )
     alarm = "reached: call now" if plan.water >= call else ""
     return Box(label="Call engineer at", figure=elevation(call, plan.system), lines=lines, alarm=alarm)

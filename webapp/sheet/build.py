@@ -19,10 +19,11 @@ from webapp.sheet.words import (
     listed,
     plural,
     range_text,
+    sentence,
     span_text,
 )
 
-BLANK = "_" * 12
+BLANK = "_" * 10
 TIME_BLANK = "___ : ___"
 _WHERE_EMS, _NOTE_EMS, _SOURCE_EMS, _DATUM_EMS, _LIFT_EMS, _SHORT_EMS = 44.0, 84.0, 26.0, 26.0, 22.0, 76.0
 _MOST_GROUPS = 3
@@ -39,22 +40,22 @@ def where_lines(scenario: Scenario, closure: Closure) -> list[str]:
 def water_lines(plan: Plan, scenario: Scenario) -> list[str]:
     """Each side's level with its range, source and day; then from level to head."""
     water, system = scenario.water, plan.system
-    sides = [_side("Flood side", plan.water, water.flood_side, plan)]
     if water.protected_side is None or not math.isfinite(plan.protected):
-        sides.append("protected side dry")
+        behind = "Protected side dry."
     else:
-        sides.append(_side("protected side", plan.protected, water.protected_side, plan))
+        behind = sentence(_side("Protected side", plan.protected, water.protected_side, plan))
     head = plan.water - plan.sill
     chain = (
         f"Water {bare_level(plan.water, system)} − sill {bare_level(plan.sill, system)} = "
-        f"{elevation(abs(head), system)} {'on' if head >= 0 else 'below'} the sill"
+        f"{elevation(abs(head), system)} {'above' if head >= 0 else 'below'} it, datum "
+        f"{cut(scenario.datum, _DATUM_EMS)}"
     )
-    local = f"Local staff reads {BLANK} at {TIME_BLANK}"
-    return [f"{'; '.join(sides)}.", f"{chain}, {cut(scenario.datum, _DATUM_EMS)}. {local}"]
+    flood = _side("Flood side", plan.water, water.flood_side, plan)
+    return [sentence(flood), f"{behind} {sentence(chain)}"]
 
 
 def _side(words: str, level: float, entered: Quantity, plan: Plan) -> str:
-    source = cut(entered.source, _SOURCE_EMS) if entered.source else "no source stated"
+    source = cut(entered.source, _SOURCE_EMS) if entered.source else "no source"
     day = f", {day_text(entered.dated)}" if entered.dated else ""
     return f"{words} {elevation(level, plan.system)}{range_text(entered, plan.system)}, {source}{day}"
 
@@ -76,13 +77,9 @@ def asked_text(plan: Plan) -> str:
     allowance, freeboard = closure.allowance, closure.limits.freeboard
     if allowance is None and freeboard is None:
         return "Top asked for: the water level itself. No allowance and no freeboard were entered."
-    told = [f"water {bare_level(plan.water, system)}"]
-    told.append(
-        f"allowance {bare_level(allowance.value, system)}" if allowance else "no allowance entered"
-    )
-    told.append(
-        f"freeboard {bare_level(freeboard.value, system)}" if freeboard else "no freeboard entered"
-    )
+    told = [bare_level(plan.water, system)]
+    told.append(f"allowance {bare_level(allowance.value, system)}" if allowance else "no allowance entered")
+    told.append(f"freeboard {bare_level(freeboard.value, system)}" if freeboard else "no freeboard entered")
     wanted = elevation(float(plan.needed.wanted_top[0]), system)
     return f"Top asked for: {' + '.join(told)} = {wanted}."
 
@@ -109,7 +106,7 @@ def _counts(plan: Plan) -> Iterator[str]:
             for bays in groups[:_MOST_GROUPS]
         ]
         left = len(groups) - len(told)
-        yield cut("; ".join([*told, *([f"{left} other counts, see the program"] if left else [])]), 60.0) + "."
+        yield sentence(cut("; ".join([*told, *([f"{left} other counts"] if left else [])]), 60.0))
     if closure.logs_in_place is not None:
         yield f"In place as entered: {span_text(closure.in_place)} in each bay."
 
@@ -136,7 +133,7 @@ def _bolts(anchor: Anchor | None, posts: int) -> str:
         for count, words in ((anchor.tension_bolts, "in tension"), (anchor.shear_bolts, "in shear"))
         if count is not None
     ]
-    return f"bolts at each post: {', '.join(told)}" if told else "bolts not entered"
+    return f"bolts of each post: {' and '.join(told)}" if told else "bolts not entered"
 
 
 def weight_text(closure: Closure, plan: Plan) -> str:
@@ -193,14 +190,12 @@ def adding_lines(plan: Plan) -> list[tuple[str, bool]]:
 def removal_lines(closure: Closure) -> list[str]:
     """When and in what order the logs come out."""
     one_way = " The guides or seals bear one way only." if closure.guide.one_way else ""
-    return [
-        f"Not before the river reads {BLANK} and is falling. Top log first. First look for mud on the flood "
-        f"side and water held on the protected side.{one_way}"
-    ]
+    when = f"Not before the river is at {BLANK} and falling."
+    return [f"{when} Top log first. Check for mud and water behind.{one_way}"]
 
 
 def short_text(closure: Closure) -> str:
     """Parts that are short or damaged."""
     if not closure.parts_short:
         return f"None entered. Counted by {BLANK} at {TIME_BLANK}"
-    return f"{listed(closure.parts_short, _SHORT_EMS, _MORE)}."
+    return sentence(listed(closure.parts_short, _SHORT_EMS, _MORE))

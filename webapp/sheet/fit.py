@@ -1,7 +1,7 @@
 """How large a field sheet may be set so that all of it stands on one page, from the room its texts take.
 
-Lengths are in millimetres on paper; the size of the type is in points. The widths of words are estimated on
-the wide side, so a sheet rather ends early than late.
+Lengths are in millimetres on paper; the size of the type is in points. What is printed as PDF is laid out and
+set smaller if the estimate was short; what is opened in a browser rests on the estimate.
 """
 
 from __future__ import annotations
@@ -16,19 +16,20 @@ SIZES = (13.0, 12.5, 12.0, 11.5, 11.0, 10.5, 10.0, 9.5, 9.0)
 """Sizes of type that are tried, the largest first; a sheet of usual length is set in 12 pt or more. [pt]"""
 LINE = 1.16
 """Height of a line over the size of the type."""
-PICTURE = (64.0, 45.0)
+PICTURE = (58.0, 43.0)
 """Width and height of the picture of the stack. [mm]"""
-CODE = 39.0
+CODE = 37.0
 """Side of the picture of the link. [mm]"""
-LABEL = 17.0
+LABEL = 18.0
 """Width of the labels at the left. [mm]"""
-SHEETS = {"letter": (193.9, 262.4), "A4": (188.0, 280.0)}
+SHEETS = {"letter": (193.9, 265.4), "A4": (188.0, 283.0)}
 """Width and height between the margins. [mm]"""
 
 _MM = 25.4 / 72
 _PAD = 1.9
-_USUAL = 0.76
-_SPARE = 4.0
+_USUAL = 0.79
+UNSEEN, SEEN = 2.0, -30.0
+"""Room kept free where nobody lays the page out before it is printed, and where it is tried. [mm]"""
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -63,7 +64,17 @@ def rows_of(text: str, ems: float) -> int:
     return max(math.ceil(text_width(text, 1.0) * _USUAL / ems), 1)
 
 
-def type_size(blocks: Iterable[Block], paper: str) -> float:
-    """Largest size at which blocks that stand under each other fit on a sheet; the smallest when none does."""
-    stacked, room = list(blocks), SHEETS[paper][1] - _SPARE
+def type_size(blocks: Iterable[Block], paper: str, *, free: float = UNSEEN) -> float:
+    """Largest size at which blocks that stand under each other fit on a sheet; the smallest when none does.
+
+    Parameters
+    ----------
+    blocks
+        From head to foot.
+    paper
+        A key of `SHEETS`.
+    free
+        Height to be left free. [mm]
+    """
+    stacked, room = list(blocks), SHEETS[paper][1] - free
     return next((size for size in SIZES if sum(block.height(size) for block in stacked) <= room), SIZES[-1])

@@ -8,7 +8,9 @@ from loads.assessment import Assessment
 from loads.scenario_file import Document
 from webapp.package.job import created_for
 from webapp.pdf import PrintJob
-from webapp.sheet.page import Paper, sheet_html
+from webapp.sheet.blocks import blocks
+from webapp.sheet.fit import SEEN, SIZES, type_size
+from webapp.sheet.page import Paper, set_in, sheet_parts
 from webapp.sheet.plan import Stamp
 
 
@@ -31,7 +33,7 @@ def sheet_job(
     PrintJob
         The same for the same input.
     """
-    html = sheet_html(
-        assessment, closure_id, document, stamp=stamp, link=link, paper=paper, now=now
-    )
-    return PrintJob(html=html, created=now or created_for(assessment.scenario))
+    parts = sheet_parts(assessment, closure_id, document, stamp=stamp, link=link, paper=paper, now=now)
+    start = type_size(blocks(parts), parts["paper"], free=SEEN)
+    first, *smaller = (set_in(parts, size) for size in SIZES[SIZES.index(start) :])
+    return PrintJob(html=first, created=now or created_for(assessment.scenario), smaller=tuple(smaller))

@@ -16,9 +16,9 @@ LEAVE = (
 
 CALL = (
     "new clear leak",
-    "debris raft on the logs",
-    "more water behind than the pump takes",
-    "vehicle or boat at the closure",
+    "debris raft",
+    "pump falling behind",
+    "boat or car near",
 )
 """Signs that somebody must hear of."""
 

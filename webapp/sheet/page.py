@@ -19,10 +19,10 @@ from loads.scenario_file import Document
 from webapp.display import System, barrier_title, moment_text
 from webapp.drawing.measure import text_width
 from webapp.qr import qr_svg
-from webapp.sheet.blocks import Parts, blocks
+from webapp.sheet.blocks import Parts, blocks, texts_of
 from webapp.sheet.boxes import TIMES, boxes
 from webapp.sheet.build import build_lines, removal_lines, short_text, water_lines, where_lines
-from webapp.sheet.fit import CODE, LABEL, LINE, PICTURE, SHEETS, type_size
+from webapp.sheet.fit import CODE, LABEL, LINE, PICTURE, type_size
 from webapp.sheet.lists import tick_items, watch_lines
 from webapp.sheet.picture import stack_picture
 from webapp.sheet.plan import STAMPS, Plan, SheetError, Stamp, plan_for
@@ -44,7 +44,7 @@ CAUTION = (
     "licensed engineer decide."
 )
 _TITLE_EMS, _NAME_EMS, _REMARK_EMS, _REVISION_EMS = 52.0, 84.0, 84.0, 14.0
-_HEADINGS = ((22.0, "large", 2.0), (36.0, "middle", 1.42), (float("inf"), "small", 1.1))
+_HEADINGS = ((22.0, "large"), (36.0, "middle"), (float("inf"), "small"))
 _NOTICE = f"Texts that end in {ELLIPSIS} are cut short; the plan with the code above has them whole."
 
 
@@ -98,6 +98,21 @@ def sheet_html(
     SheetError
         There is no such closure, or no such stamp.
     """
+    parts = sheet_parts(assessment, closure_id, document, stamp=stamp, link=link, paper=paper, now=now)
+    return set_in(parts, type_size(blocks(parts), parts["paper"]))
+
+
+def sheet_parts(
+    assessment: Assessment,
+    closure_id: str,
+    document: Document,
+    *,
+    stamp: Stamp,
+    link: str | None,
+    paper: Paper | None,
+    now: dt.datetime | None,
+) -> Parts:
+    """Everything that the template of a sheet needs but the size of its type; as `sheet_html`."""
     if stamp not in STAMPS:
         raise SheetError(f'a sheet is stamped {", ".join(STAMPS[:-1])} or {STAMPS[-1]}, not "{stamp}"')
     scenario = assessment.scenario
@@ -109,8 +124,12 @@ def sheet_html(
     parts = {**_head(scenario, closure, document, stamp, now), **_every_sheet(scenario, closure, plan, link)}
     parts |= _withheld(plan) if isinstance(plan, Withheld) else _computed(plan, scenario, now)
     parts["paper"] = paper or PAPERS[scenario.units]
-    parts |= _set(parts)
-    html = _environment().get_template("sheet.html").render(parts)
+    return parts | _style(parts)
+
+
+def set_in(parts: Parts, size: float) -> str:
+    """Sheet in one size of type. [pt]."""
+    html = _environment().get_template("sheet.html").render(parts, size=f"{size:g}")
     assert isinstance(html, str)
     return html
 
@@ -143,7 +162,9 @@ def _every_sheet(scenario: Scenario, closure: Closure, plan: Plan | Withheld, li
         "remove": removal_lines(closure),
         "short": short_text(closure),
         "code_picture": Markup(picture) if picture else None,  # noqa: S704  built from modules only
-        "link_notice": "The link is too long for a picture: open the scenario file." if link else "",
+        "link_notice": "The link is too long for a picture: open the scenario file."
+        if link and not picture
+        else "",
         "caution": CAUTION,
         "times": TIMES,
     }
@@ -177,20 +198,14 @@ def _withheld(found: Withheld) -> Parts:
     }
 
 
-def _set(parts: Parts) -> Parts:
-    """Size of the type and what goes with it."""
-    width, _ = SHEETS[parts["paper"]]
+def _style(parts: Parts) -> Parts:
+    """What the style needs, and the notice that something was cut short."""
     ems = text_width(parts["title"], 1.0, bold=True)
-    name, scale = next((name, scale) for most, name, scale in _HEADINGS if ems <= most)
-    shown = parts["code_picture"] is not None
-    told = [*parts["where"], parts["title"], parts["scenario_title"], parts["short"], parts["remarks"]]
-    told += parts.get("water", []) + parts.get("limit", []) + [text for text, _ in parts.get("build", [])]
-    told += [line for box in parts.get("boxes", ()) for line in box.lines] + parts.get("load_notes", [])
-    notices = [_NOTICE] if any(ELLIPSIS in text for text in told) else []
-    notices += [parts["link_notice"]] if not shown and parts["link_notice"] else []
-    parts = parts | {"notice": " ".join(notices), "title_size": name}
-    return parts | {
-        "size": f"{type_size(blocks(parts, width, scale), parts['paper']):g}",
+    notices = [_NOTICE] if any(ELLIPSIS in text for text in texts_of(parts)) else []
+    notices += [parts["link_notice"]] if parts["link_notice"] else []
+    return {
+        "notice": " ".join(notices),
+        "title_size": next(name for most, name in _HEADINGS if ems <= most),
         "line": LINE,
         "picture_width": PICTURE[0],
         "picture_height": PICTURE[1],

@@ -14,8 +14,8 @@ from webapp.sheet.words import bare_level, cut
 
 INK, PAPER = "#000", "#fff"
 WIDTH, HEIGHT = 240.0, 240.0 * PICTURE[1] / PICTURE[0]
-_LEFT, _TOP, _FOOT, _POST, _GAP = 62.0, 8.0, 20.0, 7.0, 12.0
-_SIZE = 11.5
+_LEFT, _TOP, _FOOT, _POST, _GAP = 60.0, 8.0, 20.0, 6.0, 12.0
+_SIZE = 13.5
 _MOST_COLUMNS = 3
 _NUMBER_STEP, _JOINT_STEP = 11.0, 2.2
 _STEPS = (1, 2, 5, 10, 20, 50, 100)
@@ -57,6 +57,7 @@ def stack_picture(plan: Plan) -> Svg:
     for column in columns:
         items += _stack(column, scale)
     items += _levels(plan, scale, columns[-1].right + _POST)
+    items += [_number(column, scale, row) for column in columns for row in _numbers(column, scale)]
     title = f"Logs numbered from the sill: {_facts(columns)}"
     return element(
         "svg",
@@ -112,7 +113,6 @@ def _stack(column: _Column, scale: _Scale) -> list[Svg]:
         *posts,
     ]
     items += [_joint(left, right, scale.y(row), there=row < column.fit) for row in _joints(column, scale)]
-    items += [_number(column, scale, row) for row in _numbers(column, scale)]
     words = cut(numbered("bay", column.bays), (right - left + 2 * _POST + _GAP) / _SIZE)
     items.append(_text((left + right) / 2, HEIGHT - 5, words, anchor="middle", bold=True))
     return items
@@ -125,7 +125,7 @@ def _joints(column: _Column, scale: _Scale) -> list[int]:
 
 
 def _numbers(column: _Column, scale: _Scale) -> list[int]:
-    """Rows that are numbered: all where there is room, else every second, fifth and so on, and the top one."""
+    """Rows that are numbered: all where there is room, else every second, fifth and so on, and the top."""
     step = next((step for step in _STEPS if step * scale.step >= _NUMBER_STEP), _STEPS[-1])
     rows = {row for row in range(1, column.on_hand + 1) if step == 1 or row % step == 0 or row == 1}
     if column.fit:
@@ -134,20 +134,20 @@ def _numbers(column: _Column, scale: _Scale) -> list[int]:
 
 
 def _number(column: _Column, scale: _Scale, row: int) -> Svg:
-    size = min(_SIZE + 1, max(scale.step * 0.86, _SIZE - 1.5))
+    size = min(_SIZE + 2, max(scale.step * 0.9, _SIZE - 3))
     middle = (scale.y(row) + scale.y(row - 1)) / 2
     there = row <= column.fit
     x, text = (column.left + column.right) / 2, str(row)
     plate = element(
         "rect",
         x=x - size * 0.36 * len(text) - 1,
-        y=middle - size * 0.42,
+        y=middle - size * 0.37,
         width=size * 0.72 * len(text) + 2,
-        height=size * 0.84,
+        height=size * 0.74,
         fill=PAPER,
     )
     label = _text(x, middle + size * 0.36, text, anchor="middle", size=size, bold=there)
-    return Svg(plate + label) if scale.step < _NUMBER_STEP else label
+    return Svg(plate + label)
 
 
 def _joint(left: float, right: float, y: float, *, there: bool) -> Svg:
@@ -203,9 +203,7 @@ def _levels(plan: Plan, scale: _Scale, end: float) -> list[Svg]:
     return items
 
 
-def _text(
-    x: float, y: float, words: str, *, anchor: str, size: float = _SIZE, bold: bool = False
-) -> Svg:
+def _text(x: float, y: float, words: str, *, anchor: str, size: float = _SIZE, bold: bool = False) -> Svg:
     return element(
         "text",
         words,

@@ -14,9 +14,9 @@ from loads.part import Part
 from webapp.display import elevation, significant
 from webapp.part_words import first_words, parts_text
 from webapp.sheet.plan import Plan
-from webapp.sheet.words import cut, length_text, source_words, span_text, value_text
+from webapp.sheet.words import above_sill, cut, sentence, source_words, span_text, value_text
 
-_RATED_EMS, _CHECKS_EMS, _REMARK_EMS = 44.0, 62.0, 90.0
+_RATED_EMS, _CHECKS_EMS = 44.0, 62.0
 _MOST_CHECKS = 3
 
 
@@ -42,7 +42,7 @@ def rated_lines(plan: Plan) -> list[str]:
     if rated is None:
         return ["Rated level: none entered. Only an engineer sets it; this program does not."]
     head = rated.value - plan.sill
-    place = f"{length_text(head, plan.system)} on the sill" if head > 0 else "below the sill: check the datum"
+    place = above_sill(head, plan.system) + ("" if head > 0 else ", check the datum")
     level = elevation(rated.value, plan.system)
     return [f"Rated level {level}, {place}; {source_words(rated, _RATED_EMS)}."]
 
@@ -54,12 +54,12 @@ def first_limit_line(plan: Plan) -> str:
         return "First-limit level: none computed, no load limit was entered."
     if first.level is None:
         ceiling = elevation(first.ceiling, plan.system)
-        return f"First-limit level: no load limit entered is reached up to {ceiling} (computed, for screening)."
+        return f"First-limit level: no load limit is reached up to {ceiling} (computed, for screening)."
     what = first_words(first, "closure")
     if first.without_water:
         return f"First limit: {what} is above its limit with no water on the sill (computed, for screening)."
     return (
-        f"First-limit level {elevation(first.level, plan.system)}: {what}. Computed screening figure, no leave "
+        f"First-limit level {elevation(first.level, plan.system)}: {what}. Computed for screening, no leave "
         "to let the water rise to it."
     )
 
@@ -97,7 +97,8 @@ def _along(built: AssessedClosure, index: int) -> float:
 
 
 def _base_moment(part: Part, index: int) -> float:
-    return next((float(figure.value[index]) for figure in part.more if figure.name == "base_moment"), math.nan)
+    found = [figure.value[index] for figure in part.more if figure.name == "base_moment"]
+    return float(found[0]) if found else math.nan
 
 
 def _greatest(values: np.ndarray) -> float:
@@ -109,11 +110,11 @@ def load_notes(plan: Plan) -> list[str]:
     """With how many logs the loads were computed, and which checks are most pressing now."""
     layout = plan.layout
     what = "the post that takes most" if len(layout.counts) > 1 else "each guide"
-    notes = [f"Computed for {what}, with {span_text(layout.counts)} logs in each bay."]
+    notes = [f"For {what}, {span_text(layout.counts)} logs in each bay."]
     if len(plan.built.levels.flood_side) > 1 and float(plan.built.levels.flood_side[1]) > layout.lowest_top:
         top = elevation(layout.lowest_top, plan.system)
         notes.append(f"At the rated level water goes over the logs, top {top}.")
-    return [" ".join(notes), pressing_text(plan)]
+    return [" ".join([*notes, pressing_text(plan)])]
 
 
 def pressing_text(plan: Plan) -> str:
@@ -130,13 +131,14 @@ def pressing_text(plan: Plan) -> str:
             texts.append(f"{len(names) - _MOST_CHECKS} more")
         told += [f"{verdict}: {', '.join(texts)}"] if texts else []
     if told:
-        return f"Now {cut('; '.join(told), _CHECKS_EMS)}."
-    limited = [check for check in checks[:1] if check.limit is not None]
-    if not limited:
+        return sentence(f"Now {cut('; '.join(told), _CHECKS_EMS)}")
+    graded = (check for check in checks if check.verdict() != "not checked")
+    lead = next(graded, None)
+    if lead is None:
         return "Now not checked: no limit was entered."
-    check = limited[0]
-    name = cut(_check_text(check.name, [check.subject]), _CHECKS_EMS - 20)
-    return f"Now below the limits entered; largest ratio {significant(float(check.ratio[0]), 3)}, {name}."
+    name = cut(_check_text(lead.name, [lead.subject]), _CHECKS_EMS - 20)
+    ratio = significant(float(lead.ratio[0]), 3)
+    return sentence(f"Now below the limits entered; largest ratio {ratio}, {name}")
 
 
 def _check_text(name: str, subjects: list[str]) -> str:

@@ -16,7 +16,7 @@ _EXACT_INCHES = 0.06
 
 
 def length_text(value: float, system: System) -> str:
-    """Length in feet with decimals and with inches, or in metres.
+    """Length, not below zero, in feet with decimals and with inches, or in metres.
 
     Examples
     --------
@@ -30,11 +30,10 @@ def length_text(value: float, system: System) -> str:
     plain = elevation(value, system)
     if system == "SI":
         return plain
-    inches = from_si(abs(value), "in", "length")
+    inches = from_si(value, "in", "length")
     whole = round(inches)
     about = "" if abs(inches - whole) < _EXACT_INCHES else f"about{NO_BREAK}"
-    sign = "−" if value < 0 and whole else ""
-    return f"{plain} ({about}{sign}{whole // 12}{NO_BREAK}ft{NO_BREAK}{whole % 12}{NO_BREAK}in)"
+    return f"{plain} ({about}{whole // 12}{NO_BREAK}ft{NO_BREAK}{whole % 12}{NO_BREAK}in)"
 
 
 def cut(text: str, ems: float) -> str:
@@ -48,6 +47,28 @@ def cut(text: str, ems: float) -> str:
     return shortened(text, ems, 1.0)
 
 
+def sentence(text: str) -> str:
+    """Text with a full stop, unless it ends with one or was cut short.
+
+    Examples
+    --------
+    >>> sentence("one clamp"), sentence("one cl…")
+    ('one clamp.', 'one cl…')
+    """
+    return text if text.endswith((".", ELLIPSIS)) else f"{text}."
+
+
+def above_sill(value: float, system: System) -> str:
+    """Height above the sill in words.
+
+    Examples
+    --------
+    >>> above_sill(-0.3048, "US").replace(NO_BREAK, " ")
+    '1.00 ft (1 ft 0 in) below sill'
+    """
+    return f"{length_text(abs(value), system)} {'above' if value >= 0 else 'below'} sill"
+
+
 def listed(texts: Sequence[str], ems: float, more: str) -> str:
     """Texts one after the other as far as there is room, then how many more there are.
 
@@ -58,7 +79,7 @@ def listed(texts: Sequence[str], ems: float, more: str) -> str:
     """
     shown: list[str] = []
     room = ems
-    for number, text in enumerate(texts):
+    for number, text in enumerate(text.rstrip(".") for text in texts):
         width = text_width(text, 1.0)
         if width > room:
             if not shown:
@@ -88,8 +109,8 @@ def plural(count: int, word: str) -> str:
 
     Examples
     --------
-    >>> plural(1, "post"), plural(4, "brace")
-    ('1\xa0post', '4\xa0braces')
+    >>> [text.replace(NO_BREAK, " ") for text in (plural(1, "post"), plural(4, "brace"))]
+    ['1 post', '4 braces']
     """
     return f"{count}{NO_BREAK}{word}{'' if count == 1 else 's'}"
 

@@ -15,7 +15,9 @@ assessment = assess(scenario, around.levels)
 more = ONE_MORE[system][1]
 
 parts.heading(assessment)
-parts.barrier_choice(st.session_state["document"])
+with st.container(horizontal=True, vertical_alignment="bottom"):
+    parts.barrier_choice(st.session_state["document"])
+    parts.logs_band(st.session_state["document"], st.session_state["barrier"])
 parts.level_band()
 barrier = assessment.barrier(st.session_state["barrier"])
 

@@ -9,6 +9,7 @@ from webapp.answer import answer
 from webapp.links import MAX_LINK_CHARACTERS, LinkError
 from webapp.pdf import pdf_available
 from webapp.scenario_files import example_files
+from webapp.sheet_form import field_sheets
 from webapp.text_table import table_text
 
 document = st.session_state["document"]
@@ -18,6 +19,7 @@ code = check_code(digest)
 parts.heading(assessment)
 
 st.subheader("Frozen link")
+link = None
 try:
     link = parts.frozen_link()
     st.code(link, language=None, wrap_lines=True)
@@ -31,6 +33,8 @@ try:
     )
 except LinkError as error:
     st.warning(f"{error}. A link may hold {MAX_LINK_CHARACTERS} characters.")
+
+field_sheets(assessment, document, link)
 
 st.subheader("Take it with you")
 with st.container(horizontal=True):

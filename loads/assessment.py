@@ -14,13 +14,25 @@ from loads.panel_checks import first_limit_of, panel_checks
 from loads.problems import Problem, ScenarioError
 from loads.records.base import Record
 from loads.records.closure import Closure
+from loads.records.i_wall import IWall
 from loads.records.panel import Panel
 from loads.records.scenario import Scenario
+from loads.records.wall import Wall
 from loads.remarks import remarks_on
 from loads.states import Levels, levels_of
+from loads.wall.assess import AssessedWall, assess_i_wall_of_line, assess_wall_of_line
 from loads.water import Fluid, fluid_of
 
-__all__ = ["Assessed", "AssessedClosure", "Assessment", "Barrier", "Withheld", "assess", "assess_panel"]
+__all__ = [
+    "Assessed",
+    "AssessedClosure",
+    "AssessedWall",
+    "Assessment",
+    "Barrier",
+    "Withheld",
+    "assess",
+    "assess_panel",
+]
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -115,5 +127,10 @@ def assess_panel(panel: Panel, site: Site) -> Barrier:
     )
 
 
-ROUTES: dict[type[Record], Callable[[Any, Site], Barrier]] = {Panel: assess_panel, Closure: assess_closure}
+ROUTES: dict[type[Record], Callable[[Any, Site], Barrier]] = {
+    Panel: assess_panel,
+    Closure: assess_closure,
+    Wall: assess_wall_of_line,
+    IWall: assess_i_wall_of_line,
+}
 """How each kind of barrier is assessed. A new kind is one record, one route and one line here."""

@@ -18,8 +18,10 @@ from loads.panel_checks import Face
 from loads.part import Part
 from loads.recheck import Recheck, recheck
 from loads.records.closure import Closure
+from loads.records.i_wall import IWall
 from loads.records.panel import Panel
 from loads.records.scenario import Scenario
+from loads.records.wall import Wall
 from loads.states import Levels
 from loads.water import Fluid
 
@@ -103,7 +105,7 @@ class Withheld:
         Part whose figures these are; empty when they are the whole barrier's.
     """
 
-    record: Panel | Closure
+    record: Panel | Closure | Wall | IWall
     setting: Setting
     first: tuple[float, float]
     second: tuple[float, float]
@@ -158,7 +160,7 @@ class Assessed:
         What each part carries; a panel has none.
     """
 
-    record: Panel | Closure
+    record: Panel | Closure | Wall | IWall
     setting: Setting
     face: Face
     loads: tuple[Load, ...]

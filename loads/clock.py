@@ -278,7 +278,7 @@ def _crest(way: Conversion, trace: Series, sill: float) -> Crest:
         level=level,
         head=level - sill,
         moment=utc(trace.times[place]),
-        at_the_end=stage == trace.values[-1],
+        at_the_end=bool(stage == trace.values[-1]),
     )
 
 

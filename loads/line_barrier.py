@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Sequence
 from dataclasses import dataclass, replace
 from datetime import date, datetime
@@ -19,8 +20,12 @@ from loads.log_advice import LogAdvice, log_advice
 from loads.moments import utc
 from loads.records.closure import Closure
 from loads.records.crew import BarrierClock, Crew
+from loads.records.i_wall import IWall
 from loads.records.panel import Panel
 from loads.records.scenario import Scenario
+from loads.records.series import StoredForecast
+from loads.records.wall import Wall
+from loads.wall.assess import head_foot
 
 LAST_READING = "last reading"
 """Name of the state of a chain that is no forecast."""
@@ -49,7 +54,7 @@ class BarrierNews:
         What was not entered and what the times rest on.
     """
 
-    record: Panel | Closure
+    record: Panel | Closure | Wall | IWall
     news: GaugeNews
     states: tuple[str, ...]
     chain: GaugeChain | None
@@ -127,7 +132,7 @@ def _without_call_out(timeline: Timeline, why: str, sentences: tuple[str, ...] |
 
 
 def _chain(
-    scenario: Scenario, record: Panel | Closure, news: GaugeNews, way: Conversion
+    scenario: Scenario, record: Panel | Closure | Wall | IWall, news: GaugeNews, way: Conversion
 ) -> tuple[tuple[str, ...], GaugeChain | None]:
     stages: dict[str, float] = {}
     if news.observed is not None:
@@ -136,19 +141,27 @@ def _chain(
     if not stages:
         return (), None
     reading = GaugeReading.of(np.array(list(stages.values())), *_pedigree(scenario, news))
-    foot = record.sill if isinstance(record, Closure) else record.bottom
+    if isinstance(record, Wall | IWall):
+        foot = head_foot(record)[0]
+    else:
+        foot = record.sill if isinstance(record, Closure) else record.bottom
     return tuple(stages), chain_of(way, reading, foot, scenario.datum)
 
 
 def _pedigree(scenario: Scenario, news: GaugeNews) -> tuple[str, date | None]:
     """Who told the readings, and the day of the newest."""
     own = [one.source for one in scenario.observed if one.gauge == news.gauge.id]
-    own += [one.source for one in scenario.forecast if one.gauge == news.gauge.id]
+    issues = [one for one in scenario.forecast if one.gauge == news.gauge.id]
+    own += [one.source for one in issues if _issued(one) == max(map(_issued, issues))]
     days = [utc(news.observed.times[-1]).date()] if news.observed is not None else []
     if news.forecast.issues and (issued := news.forecast.newest.issued) is not None:
         days.append(utc(issued).date())
     sources = dict.fromkeys(source for source in own if source)
     return "; ".join(sources), max(days, default=None)
+
+
+def _issued(stored: StoredForecast) -> float:
+    return -math.inf if stored.issued is None else stored.issued.timestamp()
 
 
 def _before_the_water(
@@ -164,7 +177,9 @@ def _before_the_water(
     pinned = fit[0].people if clock.crew and fit else None
     install = install_time(clock, closure.install, pieces_of(closure), pinned)
     ahead = None if clock.tell_owner_ahead is None else clock.tell_owner_ahead.value
-    sentences = [f"the time to close {closure.id} counts every log on hand"] if clock.install_time is None else []
+    sentences = (
+        [f"the time to close {closure.id} counts every log on hand"] if clock.install_time is None else []
+    )
     if not fit:
         why = f"no crew that can close {closure.id} has been entered, so no call-out can be told"
         return install, None, (*sentences, why)
@@ -183,7 +198,7 @@ def _before_the_water(
     return install, lead, tuple(sentences)
 
 
-def _of_allowances(record: Panel | Closure) -> tuple[str, ...]:
+def _of_allowances(record: Panel | Closure | Wall | IWall) -> tuple[str, ...]:
     """What the advice about logs leaves out because nobody entered it."""
     if not isinstance(record, Closure):
         return ()

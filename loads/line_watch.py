@@ -13,12 +13,15 @@ from loads.gauge_conversion import Conversion
 from loads.line_series import forecast_in, observed_in, thresholds_of
 from loads.records.closure import Closure
 from loads.records.gauge import Gauge
+from loads.records.i_wall import IWall
 from loads.records.panel import Panel
 from loads.records.scenario import Scenario
+from loads.records.wall import Wall
 from loads.series.ages import Age, age_of
 from loads.series.series import Forecast, Issue, Series
 from loads.series.trap import Trap
 from loads.series.traps import GaugeFacts, fast_jump, traps_of, traps_of_level
+from loads.wall.assess import head_foot
 
 HOUR = 3600.0
 
@@ -127,8 +130,10 @@ def _traps(gauge: Gauge, observed: Series | None, newest: Issue | None) -> tuple
     return found if jump is None else (*found, jump)
 
 
-def foot_level(record: Panel | Closure) -> float:
-    """Elevation of the sill or bottom. [m]."""
+def foot_level(record: Panel | Closure | Wall | IWall) -> float:
+    """Elevation of the sill, bottom or ground from which water stands against a barrier. [m]."""
+    if isinstance(record, Wall | IWall):
+        return head_foot(record)[0].value
     return record.sill.value if isinstance(record, Closure) else record.bottom.value
 
 

@@ -15,7 +15,10 @@ from loads.earth_pressure_coulomb import ACTIVE_WALL_FRICTION_SHARE, PASSIVE_WAL
 from loads.first_limit import RESOLUTION
 from loads.limits_of_use import LimitOfUse
 from loads.method_clock import CLOCK
+from loads.method_closure import CLOSURE_WATER, CLOSURES
 from loads.method_data import Method, MethodGroup
+from loads.method_wall import WALLS
+from loads.method_reading import READINGS
 from loads.recheck import FITTED_TOLERANCE, STRAIGHT_TOLERANCE
 
 _ICE_POINT = 273.15
@@ -262,5 +265,15 @@ _CHECKS = MethodGroup(
     ),
 )
 
-METHODS: tuple[MethodGroup, ...] = (_WATER, _SEDIMENT, _FORCES, _CHECKS, CLOCK)
+METHODS: tuple[MethodGroup, ...] = (
+    _WATER,
+    _SEDIMENT,
+    _FORCES,
+    _CHECKS,
+    CLOSURES,
+    CLOSURE_WATER,
+    WALLS,
+    CLOCK,
+    READINGS,
+)
 """Every formula, by group."""

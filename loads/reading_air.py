@@ -62,26 +62,31 @@ def _air_links(reading: Reading) -> Links:
                 "air_pressure", "p_a", meaning, "pressure", source=source, formula=lambda v: v["barometer"]
             )
         ]
-    links = _height("site_altitude", "H", "the water", reading)
-    if at_sea_level:
-        links += _sea_level_temperature(reading, "site_altitude_height")
-        source = f"p_a = p_b (T/T₀)ⁿ, T = T₀ − λ H, n = 5.25588 {STANDARD}"
-        links.append(
-            computed(
-                "air_pressure",
-                "p_a",
-                meaning,
-                "pressure",
-                source=source,
-                formula=lambda v: station_pressure(
-                    v["barometer"], v["site_altitude_height"], v["sea_level_temperature"]
-                ),
-            )
-        )
-        return links
-    links += _height("barometer_altitude", "H_b", "the barometer", reading)
-    links += _sea_level_temperature(reading, "barometer_altitude_height")
-    links += [
+    return _from_sea_level(reading, meaning) if at_sea_level else _from_barometer(reading, meaning)
+
+
+def _from_sea_level(reading: Reading, meaning: str) -> Links:
+    return [
+        *_height("site_altitude", "H", "the water", reading),
+        *_sea_level_temperature(reading, "site_altitude_height"),
+        computed(
+            "air_pressure",
+            "p_a",
+            meaning,
+            "pressure",
+            source=f"p_a = p_b (T/T₀)ⁿ, T = T₀ − λ H, n = 5.25588 {STANDARD}",
+            formula=lambda v: station_pressure(
+                v["barometer"], v["site_altitude_height"], v["sea_level_temperature"]
+            ),
+        ),
+    ]
+
+
+def _from_barometer(reading: Reading, meaning: str) -> Links:
+    return [
+        *_height("site_altitude", "H", "the water", reading),
+        *_height("barometer_altitude", "H_b", "the barometer", reading),
+        *_sea_level_temperature(reading, "barometer_altitude_height"),
         computed(
             "pressure_ratio",
             "p_a/p_b",
@@ -101,7 +106,6 @@ def _air_links(reading: Reading) -> Links:
             formula=lambda v: v["barometer"] * v["pressure_ratio"],
         ),
     ]
-    return links
 
 
 def _height(name: str, symbol: str, place: str, reading: Reading) -> Links:

@@ -105,25 +105,9 @@ def _clear_density(reading: Reading, series: Series) -> Links:
             )
         )
         return links
-    salinity = _OCEAN_SALINITY if reading.salinity is None else reading.salinity
-    salt = assumed(
-        "salinity", "S", "Practical salinity", "number", salinity, source="not entered; open ocean"
-    )
-    if reading.salinity is not None:
-        figure = np.array([salinity])
-        salt = Given(
-            name="salinity",
-            symbol="S",
-            meaning="Practical salinity",
-            kind="number",
-            value=figure,
-            low=figure,
-            high=figure,
-            text=f"{salinity:g}",
-        )
     source = "equation for sea water [MilleroPoisson1981]"
     links += [
-        salt,
+        _salinity(reading.salinity),
         computed(
             "density",
             "ρ_w",
@@ -134,6 +118,23 @@ def _clear_density(reading: Reading, series: Series) -> Links:
         ),
     ]
     return links
+
+
+def _salinity(entered_value: float | None) -> Given:
+    meaning = "Practical salinity"
+    if entered_value is None:
+        return assumed("salinity", "S", meaning, "number", _OCEAN_SALINITY, source="not entered; open ocean")
+    figure = np.array([entered_value])
+    return Given(
+        name="salinity",
+        symbol="S",
+        meaning=meaning,
+        kind="number",
+        value=figure,
+        low=figure,
+        high=figure,
+        text=f"{entered_value:g}",
+    )
 
 
 def _temperature(reading: Reading, series: Series) -> Given:

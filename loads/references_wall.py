@@ -81,13 +81,6 @@ WALLS: Final = (
         edition="none",
         status="common practice, no source",
     ),
-    Reference(
-        key="StripStatics",
-        citation="Statics of a strip base without tension and of a block in water, closed form and "
-        "numerical solution agreeing",
-        edition="none",
-        status="common practice, no source",
-    ),
     textbook("PunmiaIrrigation", "B. C. Punmia and B. B. Lal, Irrigation and Water Power Engineering"),
     textbook("SarkarStrength", "B. K. Sarkar, Strength of Materials"),
     textbook("Lal", "J. Lal, Hydraulics"),

@@ -22,7 +22,7 @@ from loads.records.scenario import FORMAT, Scenario
 Document = dict[str, Any]
 
 MAX_FILE_BYTES = 1_000_000
-BARRIER_KEYS = ("panel", "closure")
+BARRIER_KEYS = ("panel", "closure", "wall", "i_wall")
 """Tables of the file that hold barriers; their ids share one space."""
 _SHOWN = 40
 _VERBS = ("belongs", "has", "is", "must", "needs", "would")
@@ -121,7 +121,7 @@ def scenario_of(document: Mapping[str, Any]) -> Scenario:
 def _id_problems(document: Mapping[str, Any]) -> list[Problem]:
     barriers = [item for kind in BARRIER_KEYS for item in _listed(document.get(kind))]
     if not barriers:
-        rule = "has no barrier; add at least one, under [[panel]] or [[closure]]"
+        rule = "has no barrier; add at least one, under [[panel]], [[closure]], [[wall]] or [[i_wall]]"
         return [Problem(path="the scenario", value="", rule=rule)]
     readings = _listed(document.get("reading"))
     return _used_twice(barriers, "barrier") + _used_twice(readings, "reading")

@@ -87,16 +87,11 @@ FULL: dict[str, Any] = {
 
 def closure_scene(closure: dict[str, Any], flood_side: str = "1 m", **more: Any) -> Document:
     """Document of one closure; `basis` and `near_limit` among `more` are the scenario's."""
-    head = {name: more.pop(name) for name in ("basis", "near_limit") if name in more}
-    water = {"flood_side": flood_side, **more}
-    return {
-        "format": 1,
-        "title": "Trial",
-        "datum": "trial datum",
-        **head,
-        "water": water,
-        "closure": [closure],
-    }
+    document: Document = {"format": 1, "title": "Trial", "datum": "trial datum", "closure": [closure]}
+    for name in ("basis", "near_limit"):
+        if name in more:
+            document[name] = more.pop(name)
+    return {**document, "water": {"flood_side": flood_side, **more}}
 
 
 def closure_of(document: Document, levels: Levels | None = None) -> AssessedClosure:

@@ -203,7 +203,7 @@ def test_water(water: Table, sentence: str) -> None:
 def test_the_scenario_as_a_whole() -> None:
     whole = scene(PLATE)
     assert problems({**whole, "panel": []}) == [
-        "the scenario has no panel; add at least one, under [[panel]]"
+        "the scenario has no barrier; add at least one, under [[panel]], [[closure]], [[wall]] or [[i_wall]]"
     ]
     assert "title is missing" in problems({name: value for name, value in whole.items() if name != "title"})
     assert 'title is ""; it must not be empty' in problems({**whole, "title": ""})

@@ -241,6 +241,26 @@ def test_a_stiff_plate_shares_the_moment_by_distance() -> None:
     assert pulls @ np.array([0.06, 0.06, 0.34, 0.34]) == pytest.approx(moment, rel=1e-12)
 
 
+def test_a_moment_toward_the_flood_side_pulls_the_bolts_no_less() -> None:
+    """Load above the brace only, as with water held behind up to it: base moment and brace lift add up."""
+    closure = changed(FULL, post__brace__height="0.5 m", guide=None)
+    forward = closure_under(closure, flood_side="3.4 m", protected_side="1.9 m")
+    back = closure_under(closure, flood_side="1.9 m", protected_side="3.4 m")
+    for barrier in (forward, back):
+        post = part_of(barrier, "post 1")
+        couple = abs(figure_of(post, "base_moment")) / 0.26
+        spare = max(figure_of(post, "brace_lift") - 88 * 9.80665, 0.0)
+        assert figure_of(post, "anchor_tension") == pytest.approx(couple + spare, rel=1e-12)
+    assert (
+        figure_of(part_of(forward, "post 1"), "base_moment")
+        < 0
+        < figure_of(part_of(back, "post 1"), "base_moment")
+    )
+    check = check_of(back.checks, "bolt tension")
+    assert float(check.demand[0]) < 0
+    assert float(check.ratio[0]) > 0
+
+
 def test_reverse_load_is_beyond_one_way_guides() -> None:
     forward = closure_under(FULL, flood_side="3 m")
     back = closure_under(FULL, flood_side="2 m", protected_side="2.4 m")

@@ -65,15 +65,24 @@ def without(closure: dict[str, Any], *keys: str) -> dict[str, Any]:
         ({"anchor": {"shear_bolts": 2}}, "closure[C1].post is missing; anchors hold a post"),
         (
             {"post": {}, "anchor": {"tension_bolts": 2}},
-            "closure[C1].anchor.lever_arm is missing; bolts that are pulled need it, or the distances of all bolts",
+            (
+                "closure[C1].anchor.lever_arm is missing; bolts that are pulled need it, or the distances of "
+                "all bolts"
+            ),
         ),
         (
             {"post": {}, "anchor": {"lever_arm": "9 in"}},
-            "closure[C1].anchor.tension_bolts is missing; a lever arm says nothing without the number of bolts",
+            (
+                "closure[C1].anchor.tension_bolts is missing; a lever arm says nothing without the number of "
+                "bolts"
+            ),
         ),
         (
             {"post": {}, "anchor": {"bolt_distances": ["4 in", "12 in"], "lever_arm": "9 in"}},
-            "closure[C1].anchor.lever_arm is given; it is not used beside bolt_distances; leave one of them out",
+            (
+                "closure[C1].anchor.lever_arm is given; it is not used beside bolt_distances; leave one of "
+                "them out"
+            ),
         ),
         (
             {"post": {}, "anchor": {"plate_width": "10 in"}},
@@ -85,8 +94,11 @@ def without(closure: dict[str, Any], *keys: str) -> dict[str, Any]:
         ),
         (
             {"post": {"brace": {"height": "1.7 m", "angle": "45 deg"}}},
-            'closure[C1].post.brace.height is "1.7 m"; it must not be above the top of the post, which ends with '
-            "the logs on hand",
+            (
+                'closure[C1].post.brace.height is "1.7 m"; it must not be above the top of the post, '
+                "which ends with "
+                "the logs on hand"
+            ),
         ),
         (
             {"post": {"height": "1.5 m"}},
@@ -94,29 +106,42 @@ def without(closure: dict[str, Any], *keys: str) -> dict[str, Any]:
         ),
         (
             {"post": {"limits": {"brace_force": "2 kip"}}},
-            'closure[C1].post.limits.brace_force is "2 kip"; there is no brace; enter one or leave the limit out',
+            (
+                'closure[C1].post.limits.brace_force is "2 kip"; there is no brace; enter one or leave the '
+                "limit out"
+            ),
         ),
         (
             {"post": {"section": {"thickness": "6 in"}}},
             "closure[C1].post.section.width is missing; enter it here or as the post's width",
         ),
         (
-            {"sediment": [{"side": "flood", "top": "-1 m", "pressure": "fluid mud", "fluid_unit_weight": "80 pcf"}]},
+            {
+                "sediment": [
+                    {"side": "flood", "top": "-1 m", "pressure": "fluid mud", "fluid_unit_weight": "80 pcf"}
+                ]
+            },
             'closure[C1].sediment[0].top is "-1 m"; it must lie above the sill of the closure, "0 m"',
         ),
         (
             {"seal": {"rate": "1 gpm/ft", "at_head": "3 ft"}},
-            "closure[C1].seal.exponent is missing; a rate of leakage needs the power of the head by which it grows: "
-            "0.5 for an opening, 1 for a slow seep",
+            (
+                "closure[C1].seal.exponent is missing; a rate of leakage needs the power of the head by "
+                "which it grows: "
+                "0.5 for an opening, 1 for a slow seep"
+            ),
         ),
         (
             {"adding": {"with_water": False, "up_to": "1 m"}},
-            'closure[C1].adding.up_to is "1 m"; it is not used while logs cannot be added with water at the sill; '
-            "leave it out",
+            (
+                'closure[C1].adding.up_to is "1 m"; it is not used while logs cannot be added with water '
+                "at the sill; "
+                "leave it out"
+            ),
         ),
         ({"bay": 3}, 'closure[C1].bay is not a known key; did you mean "bays"?'),
     ],
-)  # fmt: skip
+)
 def test_closure(change: dict[str, Any], sentence: str) -> None:
     assert problems({**SPARSE, **change}) == [sentence]
 
@@ -132,8 +157,11 @@ def test_closure(change: dict[str, Any], sentence: str) -> None:
         ),
         (
             {"material": "aluminium 6061"},
-            'closure[C1].log.material is "aluminium 6061"; it must be a reference material, or left out: it is '
-            'not in the table of materials; did you mean "aluminium 6061-T6"?',
+            (
+                'closure[C1].log.material is "aluminium 6061"; it must be a reference material, or left '
+                "out: it is "
+                'not in the table of materials; did you mean "aluminium 6061-T6"?'
+            ),
         ),
         (
             {"section": {"thickness": "2 in", "wall": "0.1 in"}},
@@ -153,13 +181,19 @@ def test_closure(change: dict[str, Any], sentence: str) -> None:
         ),
         (
             {"section": {"shape": "properties", "section_modulus": "12 in2"}},
-            'closure[C1].log.section.section_modulus is "12 in2"; in2 is a unit of area, and this is a section '
-            'modulus; write it with one of in3, mm3, cm3, m3, for example "12 in3"',
+            (
+                'closure[C1].log.section.section_modulus is "12 in2"; in2 is a unit of area, and this is '
+                "a section "
+                'modulus; write it with one of in3, mm3, cm3, m3, for example "12 in3"'
+            ),
         ),
         (
             {"weight": "3 kPa"},
-            'closure[C1].log.weight is "3 kPa"; kPa is a unit of pressure, and this is a weight; write it with '
-            'one of lb, lbf, kip, kg, N, kN, for example "3 lb"',
+            (
+                'closure[C1].log.weight is "3 kPa"; kPa is a unit of pressure, and this is a weight; '
+                "write it with "
+                'one of lb, lbf, kip, kg, N, kN, for example "3 lb"'
+            ),
         ),
         (
             {"limits": {"span_over_deflection": 0.5}},
@@ -170,7 +204,7 @@ def test_closure(change: dict[str, Any], sentence: str) -> None:
             'closure[C1].log.limits.bending_stress is 12; it needs a unit, in quotes, for example "12 ksi"',
         ),
     ],
-)  # fmt: skip
+)
 def test_log(change: dict[str, Any], sentence: str) -> None:
     assert problems({**SPARSE, "log": {**LOG, **change}}) == [sentence]
 
@@ -197,14 +231,17 @@ def test_all_problems_come_at_once() -> None:
 @pytest.mark.parametrize(
     ("basis", "sentence"),
     [
-        ({"method": "strength", "load_factor": 1.4}, "basis.resistance_factor is missing; method \"strength\" needs it"),
+        (
+            {"method": "strength", "load_factor": 1.4},
+            'basis.resistance_factor is missing; method "strength" needs it',
+        ),
         (
             {"load_factor": 1.4},
             'basis.load_factor is given; it is not used by method "working stress"; leave it out',
         ),
         ({"category_factor": 0}, "basis.category_factor is 0; it must be more than 0"),
     ],
-)  # fmt: skip
+)
 def test_basis(basis: dict[str, Any], sentence: str) -> None:
     assert problems(SPARSE, basis=basis) == [sentence]
 

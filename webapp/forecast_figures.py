@@ -26,7 +26,11 @@ _STYLE = {
 }
 _ABOVE = (VERMILLION, "dashdot", 1.5)
 _HEIGHT, _MARGINS, _LABEL_HEIGHT = 460, 100, 15
-_LEVELS = {"sill": ("#1d2733", "solid"), "rated level": (GREEN, "longdash"), "first-limit level": (VERMILLION, "dash")}
+_LEVELS = {
+    "sill": ("#1d2733", "solid"),
+    "rated level": (GREEN, "longdash"),
+    "first-limit level": (VERMILLION, "dash"),
+}
 
 
 def _local(moment: datetime, line: LineClock, zone: ZoneInfo) -> str:
@@ -97,19 +101,21 @@ def levels_figure(line: LineClock, news: GaugeNews, zone: ZoneInfo, system: Syst
     room = max(high - low, 0.1) * 0.06
     shapes = [_across(height, _LEVELS[label]) for (_, label, _), height in zip(marks, heights, strict=True)]
     shapes.append(_now_line(line, zone))
-    names = [f"{barrier} {label}" for barrier, label, _ in marks]
+    names = [f"{barrier} {label.removesuffix(' level')}" for barrier, label, _ in marks]
     labels = _labels(names, heights, low - room, high + room)
     layout = {
         "height": _HEIGHT,
-        "margin": {"l": 55, "r": 150, "t": 20, "b": _MARGINS - 20},
+        "margin": {"l": 55, "r": 105, "t": 40, "b": _MARGINS - 40},
         "xaxis": _axis(line, zone),
         "yaxis": {
-            "title": {"text": f"reading of {news.gauge.name or news.gauge.id}, {unit_label('length', system)}"},
+            "title": {
+                "text": f"reading of {news.gauge.name or news.gauge.id}, {unit_label('length', system)}"
+            },
             "range": [low - room, high + room],
         },
         "shapes": shapes,
         "annotations": labels,
-        "legend": {"orientation": "h", "y": -0.2},
+        "legend": {"orientation": "h", "y": 1.02, "yanchor": "bottom"},
         "hovermode": "x",
     }
     return {"data": data, "layout": layout}
@@ -127,9 +133,7 @@ def _now_line(line: LineClock, zone: ZoneInfo) -> dict[str, Any]:
     return {"type": "line", "yref": "paper", "y0": 0, "y1": 1, "x0": now, "x1": now, "line": style}
 
 
-def _labels(
-    names: Sequence[str], heights: Sequence[float], low: float, high: float
-) -> list[dict[str, Any]]:
+def _labels(names: Sequence[str], heights: Sequence[float], low: float, high: float) -> list[dict[str, Any]]:
     """Labels beside the lines, moved apart where they would lie on one another."""
     least = (high - low) * _LABEL_HEIGHT / (_HEIGHT - _MARGINS)
     placed: list[float] = []
@@ -200,11 +204,11 @@ def plan_figure(line: LineClock, plan: Plan, zone: ZoneInfo) -> dict[str, Any]:
     crews = len({job.crew for job in jobs})
     layout = {
         "height": 150 + 60 * crews,
-        "margin": {"l": 70, "r": 20, "t": 20, "b": 90},
+        "margin": {"l": 70, "r": 20, "t": 50, "b": 50},
         "xaxis": _axis(line, zone),
         "yaxis": {"autorange": "reversed"},
         "shapes": [_now_line(line, zone)],
-        "legend": {"orientation": "h", "y": -0.45},
+        "legend": {"orientation": "h", "y": 1.02, "yanchor": "bottom"},
         "barmode": "overlay",
     }
     return {"data": [bars, water], "layout": layout}
@@ -213,6 +217,8 @@ def plan_figure(line: LineClock, plan: Plan, zone: ZoneInfo) -> dict[str, Any]:
 def plan_text(plan: Plan) -> str:
     """Say what the bar chart shows."""
     told = [
-        f"crew {crew.crew.id}: {', '.join(job.barrier for job in crew.jobs)}" for crew in plan.crews if crew.jobs
+        f"crew {crew.crew.id}: {', '.join(job.barrier for job in crew.jobs)}"
+        for crew in plan.crews
+        if crew.jobs
     ]
     return f"Crews against time. {'; '.join(told) or 'Nobody has anything to do'}."

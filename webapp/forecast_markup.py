@@ -58,13 +58,17 @@ def clock_table(line: LineClock, zone: ZoneInfo, system: System) -> str:
     ]
     if not rows:
         return "<p>No closure has a gauge with a forecast that leads to it, so there is no clock yet.</p>"
-    wide = f'<div class="sh-wide">{table(headings, rows, numeric={2})}</div>'
+    wide = f'<div class="sh-wide sh-clock-table">{table(headings, rows, numeric={2})}</div>'
     return wide + "".join(_card(one, zone, system) for one in closures)
 
 
 def _cell(timeline: Timeline, name: str, zone: ZoneInfo) -> str:
-    words = escaped(instant_text(getattr(timeline, name), zone, name))
-    return f"<b>{words}</b>" if name == "call_out" else words
+    instant = getattr(timeline, name)
+    words = instant_text(instant, zone, name)
+    if instant is None or instant.moment is None:
+        return f"<small>{escaped(words)}</small>"
+    clock, abbreviation, day = words.split(" ", 2)
+    return f"<b>{escaped(clock)}&nbsp;{escaped(abbreviation)}</b> <small>{escaped(day)}</small>"
 
 
 def _card(one: BarrierNews, zone: ZoneInfo, system: System) -> str:
@@ -81,7 +85,7 @@ def _card(one: BarrierNews, zone: ZoneInfo, system: System) -> str:
     return f'<div class="sh-clock sh-narrow"><b>{title}</b>{rows}</div>'
 
 
-def per_closure(line: LineClock, system: System) -> str:
+def per_closure(line: LineClock) -> str:
     """What one foot more does, what the logs ask for, and what the times rest on."""
     content = ""
     for one in line.barriers:

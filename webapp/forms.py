@@ -36,6 +36,14 @@ SHAPE_FIELDS: dict[str, tuple[str, ...]] = {
 }
 """Geometry asked for each shape."""
 
+_YIELDING = (
+    "saturated_unit_weight",
+    "moist_unit_weight",
+    "friction_angle",
+    "cohesion",
+    "wall_friction",
+    "surcharge",
+)
 PRESSURE_FIELDS: dict[str, tuple[str, ...]] = {
     "at rest": (
         "saturated_unit_weight",
@@ -44,22 +52,8 @@ PRESSURE_FIELDS: dict[str, tuple[str, ...]] = {
         "overconsolidation_ratio",
         "surcharge",
     ),
-    "active": (
-        "saturated_unit_weight",
-        "moist_unit_weight",
-        "friction_angle",
-        "cohesion",
-        "wall_friction",
-        "surcharge",
-    ),
-    "passive": (
-        "saturated_unit_weight",
-        "moist_unit_weight",
-        "friction_angle",
-        "cohesion",
-        "wall_friction",
-        "surcharge",
-    ),
+    "active": _YIELDING,
+    "passive": _YIELDING,
     "entered": ("saturated_unit_weight", "moist_unit_weight", "pressure_coefficient", "surcharge"),
     "fluid mud": ("fluid_unit_weight",),
     "equivalent fluid": ("fluid_unit_weight",),

@@ -16,6 +16,7 @@ page = st.navigation(
     [
         st.Page(HERE / "views" / "flood_line.py", title="Flood line", default=True),
         st.Page(HERE / "views" / "barrier.py", title="Barrier", url_path="barrier"),
+        st.Page(HERE / "views" / "forecast.py", title="Forecast", url_path="forecast"),
         st.Page(HERE / "views" / "inputs.py", title="Inputs", url_path="inputs"),
         st.Page(HERE / "views" / "readings.py", title="Readings", url_path="readings"),
         st.Page(HERE / "views" / "sheets.py", title="Sheets and links", url_path="sheets"),

@@ -39,7 +39,7 @@ def table_at(document: Document, place: int) -> dict[str, Any]:
     """Table of the reading at a place; after the last what a new one begins with."""
     records = document.get("reading", ())
     if place < len(records):
-        return {"side": "flood", **records[place]}
+        return {**records[place], "side": records[place].get("side", "flood")}
     taken = {str(record["id"]) for record in records}
     free = next(f"R{n}" for n in range(1, len(taken) + 2) if f"R{n}" not in taken)
     return {"id": free, "kind": "staff", "side": "flood"}

@@ -17,7 +17,7 @@ class AnchorForces:
     Attributes
     ----------
     tension
-        Of all bolts that are pulled. [N]
+        Of all bolts that are pulled, on whichever side of the plate. [N]
     bolt_tension
         Of the bolt that is pulled most. [N]
     bolt_shear
@@ -74,31 +74,31 @@ def anchor_forces(
     Returns
     -------
     AnchorForces
-        Positive tension on the flood side of the plate; a negative one pulls the other side.
+        Magnitudes. A moment toward the flood side pulls the bolts of the other side, taken to be alike.
 
     Notes
     -----
-    T = M/a with the lever arm a, or bolt by bolt for a stiff plate. What a brace lifts beyond the weight,
+    T = |M|/a with the lever arm a, or bolt by bolt for a stiff plate. What a brace lifts beyond the weight,
     U = max(lift − weight, 0), is given whole to the bolts that are pulled, which is on the careful side:
-    T = M/a + U. The plate bears C = |M|/a + max(weight − lift, 0) on its contact area.
+    T = |M|/a + U. The plate bears C = |M|/a + max(weight − lift, 0) on its contact area.
     """
     missing = np.full(len(moment), np.nan)
     spare = np.maximum(lift - weight, 0.0)
     tension = bolt = couple = missing
     if anchor.bolt_distances is not None:
         distances = np.array([distance.value for distance in anchor.bolt_distances])
-        pulls = bolt_tensions(moment, distances)
+        pulls = bolt_tensions(np.abs(moment), distances)
         couple = pulls.sum(axis=1)
         tension = couple + spare
         bolt = pulls[:, int(distances.argmax())] + spare / len(distances)
     elif anchor.lever_arm is not None and anchor.tension_bolts is not None:
-        couple = moment / anchor.lever_arm.value
+        couple = np.abs(moment) / anchor.lever_arm.value
         tension = couple + spare
         bolt = tension / anchor.tension_bolts
     pressure = missing
     if anchor.plate_width is not None and anchor.contact_length is not None:
         area = anchor.plate_width.value * anchor.contact_length.value
-        pressure = (np.abs(couple) + np.maximum(weight - lift, 0.0)) / area
+        pressure = (couple + np.maximum(weight - lift, 0.0)) / area
     return AnchorForces(
         tension=tension,
         bolt_tension=bolt,

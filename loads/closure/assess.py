@@ -9,7 +9,8 @@ from loads.barrier import Assessed, Barrier, Pressed, Site, Withheld, pressed, w
 from loads.check_table import Checks
 from loads.closure.demands import Demands, Structure, demands_on, structure_of
 from loads.closure.face import face_panel
-from loads.closure.hydraulics import Hydraulics, hydraulic_checks, hydraulics_of
+from loads.closure.hydraulic_checks import hydraulic_checks
+from loads.closure.hydraulics import Hydraulics, hydraulics_of
 from loads.closure.limits import LimitSearch
 from loads.closure.parts import parts_of
 from loads.closure.recheck_parts import PartsRecheck, recheck_parts

@@ -56,7 +56,7 @@ class LimitSearch:
         return [check for check in found if not np.isnan(check.limit_value).all()]
 
     def _ratios(self, names: list[Name]) -> Callable[[FloatArray], FloatArray]:
-        """Signed ratios (n, c) at flood-side levels; the first call fills in subject and name of each check."""
+        """Signed ratios (n, c) at flood-side levels; the first call fills in what each check is."""
 
         def ratios(flood_side: FloatArray) -> FloatArray:
             checks = self._checks(risen(self.found.setting, flood_side))

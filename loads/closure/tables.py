@@ -11,8 +11,10 @@ from loads.arrays import FloatArray
 from loads.check_table import CheckTable, table_of
 from loads.closure.demands import Demands
 from loads.closure.materials import MATERIALS
+from loads.closure.sections import SectionProperties
 from loads.quantity import Quantity
 from loads.records.basis import Basis
+from loads.records.closure_parts import Log, Post
 from loads.units import from_si
 
 FROM_MEMORY = "The limit is from memory and still has to be confirmed in the document it names."
@@ -116,45 +118,47 @@ def _either(force: Row, stress: Row, *, section_known: bool) -> Iterator[Row]:
         yield Row(name=force.name, kind=force.kind, demand=force.demand, limit=None, remarks=remarks)
 
 
-def _log_rows(demands: Demands, basis: Basis) -> Iterator[Row]:
-    forces, log, section = demands.logs, demands.structure.closure.log, demands.structure.log
-    limits = log.limits
-    bending, bending_words = stress_limit(limits.bending_stress, log.material, "bending", basis)
-    shear, shear_words = stress_limit(limits.shear_stress, log.material, "shear", basis)
-    bearing, bearing_words = stress_limit(limits.bearing_stress, log.material, "bearing", basis)
+def _bent_rows(
+    moment: FloatArray,
+    shear: FloatArray,
+    member: Log | Post,
+    section: SectionProperties,
+    basis: Basis,
+) -> Iterator[Row]:
+    """Bending and shear of a log or a post, as forces or as stresses."""
+    limits, material = member.limits, member.material
+    bending, bending_words = stress_limit(limits.bending_stress, material, "bending", basis)
+    shearing, shear_words = stress_limit(limits.shear_stress, material, "shear", basis)
     modulus, area = section.section_modulus, section.shear_area
     yield from _either(
-        Row(name="bending moment", kind="moment", demand=forces.moment, limit=limits.moment),
+        Row(name="bending moment", kind="moment", demand=moment, limit=limits.moment),
         Row(
             name="bending stress",
             kind="stress",
-            demand=forces.moment / modulus,
+            demand=moment / modulus,
             limit=bending,
             remarks=bending_words,
         ),
         section_known=bool(np.isfinite(modulus)),
     )
     yield from _either(
-        Row(name="shear", kind="force", demand=forces.reaction, limit=limits.shear),
-        Row(
-            name="shear stress",
-            kind="stress",
-            demand=forces.reaction / area,
-            limit=shear,
-            remarks=shear_words,
-        ),
+        Row(name="shear", kind="force", demand=shear, limit=limits.shear),
+        Row(name="shear stress", kind="stress", demand=shear / area, limit=shearing, remarks=shear_words),
         section_known=bool(np.isfinite(area)),
     )
+
+
+def _log_rows(demands: Demands, basis: Basis) -> Iterator[Row]:
+    forces, log = demands.logs, demands.structure.closure.log
+    limits = log.limits
+    yield from _bent_rows(forces.moment, forces.reaction, log, demands.structure.log, basis)
     if limits.line_load is not None:
         yield Row(name="line load", kind="line load", demand=forces.line_load, limit=limits.line_load)
     if limits.reaction is not None:
         yield Row(name="end reaction", kind="force", demand=forces.reaction, limit=limits.reaction)
+    bearing, words = stress_limit(limits.bearing_stress, log.material, "bearing", basis)
     yield Row(
-        name="bearing pressure",
-        kind="stress",
-        demand=forces.bearing_pressure,
-        limit=bearing,
-        remarks=bearing_words,
+        name="bearing pressure", kind="stress", demand=forces.bearing_pressure, limit=bearing, remarks=words
     )
     if limits.deflection is not None or limits.span_over_deflection is None:
         yield _sag_row(forces.deflection, limits.deflection, forces.moment)
@@ -204,39 +208,23 @@ def _made_length(value: float, unit: str, source: str) -> Quantity:
 
 
 def _post_rows(demands: Demands, basis: Basis) -> Iterator[Row]:
+    """Magnitudes with the sign of the load behind them: a braced post bends both ways under one load."""
     post = demands.structure.closure.post
-    forces, anchors, section = demands.posts, demands.anchors, demands.structure.post
+    forces, anchors = demands.posts, demands.anchors
     if post is None:
         yield Row(name="base moment", kind="moment", demand=forces.base_moment, limit=None)
         yield Row(name="base shear", kind="force", demand=forces.base_shear, limit=None)
         return
     limits = post.limits
-    bending, bending_words = stress_limit(limits.bending_stress, post.material, "bending", basis)
-    shear, shear_words = stress_limit(limits.shear_stress, post.material, "shear", basis)
-    modulus, area = section.section_modulus, section.shear_area
-    yield from _either(
-        Row(name="bending moment", kind="moment", demand=forces.moment, limit=limits.moment),
-        Row(
-            name="bending stress",
-            kind="stress",
-            demand=forces.moment / modulus,
-            limit=bending,
-            remarks=bending_words,
-        ),
-        section_known=bool(np.isfinite(modulus)),
+    way = np.where(forces.total < 0, -1.0, 1.0)
+    moment, shear, sag = (np.abs(v) * way for v in (forces.moment, forces.shear, forces.deflection))
+    yield from _bent_rows(moment, shear, post, demands.structure.post, basis)
+    yield _sag_row(sag, limits.deflection, moment)
+    others = (
+        ("brace force", "force", forces.brace_force, limits.brace_force),
+        ("bolt tension", "force", anchors.bolt_tension, limits.anchor_tension),
+        ("bolt shear", "force", anchors.bolt_shear, limits.anchor_shear),
+        ("pressure under the base plate", "stress", anchors.contact_pressure, limits.contact_pressure),
     )
-    yield from _either(
-        Row(name="shear", kind="force", demand=forces.shear, limit=limits.shear),
-        Row(name="shear stress", kind="stress", demand=forces.shear / area, limit=shear, remarks=shear_words),
-        section_known=bool(np.isfinite(area)),
-    )
-    yield _sag_row(forces.deflection, limits.deflection, forces.moment)
-    yield Row(name="brace force", kind="force", demand=forces.brace_force, limit=limits.brace_force)
-    yield Row(name="bolt tension", kind="force", demand=anchors.bolt_tension, limit=limits.anchor_tension)
-    yield Row(name="bolt shear", kind="force", demand=anchors.bolt_shear, limit=limits.anchor_shear)
-    yield Row(
-        name="pressure under the base plate",
-        kind="stress",
-        demand=anchors.contact_pressure,
-        limit=limits.contact_pressure,
-    )
+    for name, kind, demand, limit in others:
+        yield Row(name=name, kind=kind, demand=np.abs(demand) * way, limit=limit)

@@ -74,7 +74,10 @@ def _braces(barrier: AssessedClosure) -> Iterator[WhatIf]:
         pieces.add(post.pieces)
         part = f"brace of {post.name}"
         if structure.prop.fixity == "pinned":
-            words = f"Without its brace {post.name} cannot stand: its base is entered as a pin, which holds no moment."
+            words = (
+                f"Without its brace {post.name} cannot stand: its base is entered as a pin, which holds no "
+                "moment."
+            )
             yield WhatIf(
                 name="brace lost", part=part, words=words, stands=False, checks=Checks(()), demands=None
             )
@@ -104,9 +107,9 @@ def _posts(barrier: AssessedClosure) -> Iterator[WhatIf]:
         spans, old = layout.spans, structure.layout.spans
         growth = float((spans[number] / max(old[number], old[number + 1])) ** 2)
         words = (
-            f"The logs of bays {number + 1} and {number + 2} lose their bearing at {structure.layout.posts[number].name} "
-            f"and fall unless they reach across both bays; such logs would carry {growth:.2g} times the bending "
-            "moment, and the posts beside them more."
+            f"The logs of bays {number + 1} and {number + 2} lose their bearing at "
+            f"{structure.layout.posts[number].name} and fall unless they reach across both bays; such logs "
+            f"would carry {growth:.2g} times the bending moment, and the posts beside them more."
         )
         tables = [_renamed(table, number) for table in part_tables(own, barrier.basis, _near(barrier))]
         yield WhatIf(

@@ -8,7 +8,7 @@ import numpy as np
 
 from loads.barrier import Pressed
 from loads.checks import Check, check_of, level_check
-from loads.closure.hydraulics import made
+from loads.closure.hydraulic_checks import made
 from loads.closure.layout import Layout
 from loads.panel_checks import load_checks, peak_pressure
 from loads.records.closure import Closure

@@ -41,30 +41,9 @@ def _log(barrier: AssessedClosure, index: int) -> Iterator[Step]:
     part = _most(barrier, "log", index)
     if part is None:
         return
-    layout, structure = barrier.structure.layout, barrier.structure
+    layout = barrier.structure.layout
     bay = int(part.id.split()[1]) - 1
-    span = float(layout.spans[bay])
-    load, moment, reaction = (float(v[index]) for v in (part.line_load, part.moment, part.reaction))
-    lines = [
-        *_load_lines(barrier, part, index),
-        line("M = w·L²/8 = {}·{}²/8 = {}", (load, "line load"), (span, "length"), (moment, "moment")),
-        line("R = w·L/2 = {}·{}/2 = {}", (load, "line load"), (span, "length"), (reaction, "force")),
-    ]
-    if layout.bearing > 0:
-        area = layout.bearing * layout.log_height
-        values = ((reaction, "force"), (layout.bearing, "length"), (layout.log_height, "length"))
-        lines.append(line("p_b = R/(b·h) = {}/({}·{}) = {}", *values, (reaction / area, "pressure")))
-    lines += _stress_lines(moment, reaction, structure.log.section_modulus, structure.log.shear_area)
-    stiffness, sag = structure.log_stiffness, float(part.deflection[index])
-    if math.isfinite(sag):
-        second = structure.log.second_moment
-        bent = (
-            (load, "part line load"),
-            (span, "part length"),
-            (stiffness / second, "stress"),
-            (second, "section second moment"),
-        )
-        lines.append(line("δ = 5·w·L⁴/(384·E·I) = 5·{}·{}⁴/(384·{}·{}) = {}", *bent, (sag, "deflection")))
+    span, sag = float(layout.spans[bay]), float(part.deflection[index])
     yield Step(
         title=f"Log that carries most: {part.id}",
         formula="simple beam from middle to middle of its bearings: w = V(bottom) − V(top) = ∫p dz; "
@@ -74,16 +53,42 @@ def _log(barrier: AssessedClosure, index: int) -> Iterator[Step]:
             term("b", "bearing length at each end", layout.bearing, "length"),
             term("L", "span c + b", span, "length"),
             term("h", "effective height of a log", layout.log_height, "length"),
-            term("w", "load along the log", load, "line load"),
+            term("w", "load along the log", float(part.line_load[index]), "line load"),
             *_section_terms(barrier, post=False),
         ),
-        lines=tuple(lines),
+        lines=(*_load_lines(barrier, part, index), *_log_lines(barrier, part, span, index)),
         results=(
-            term("M", "bending moment", moment, "moment"),
-            term("R", "reaction at each end", reaction, "force"),
+            term("M", "bending moment", float(part.moment[index]), "moment"),
+            term("R", "reaction at each end", float(part.reaction[index]), "force"),
             *((term("δ", "deflection", sag, "deflection"),) if math.isfinite(sag) else ()),
         ),
     )
+
+
+def _log_lines(barrier: AssessedClosure, part: Part, span: float, index: int) -> list[Line]:
+    """Moment, reaction, bearing pressure, stresses and deflection with numbers."""
+    layout, structure = barrier.structure.layout, barrier.structure
+    load, moment, reaction = (float(v[index]) for v in (part.line_load, part.moment, part.reaction))
+    lines = [
+        line("M = w·L²/8 = {}·{}²/8 = {}", (load, "line load"), (span, "length"), (moment, "moment")),
+        line("R = w·L/2 = {}·{}/2 = {}", (load, "line load"), (span, "length"), (reaction, "force")),
+    ]
+    if layout.bearing > 0:
+        area = layout.bearing * layout.log_height
+        values = ((reaction, "force"), (layout.bearing, "length"), (layout.log_height, "length"))
+        lines.append(line("p_b = R/(b·h) = {}/({}·{}) = {}", *values, (reaction / area, "pressure")))
+    lines += _stress_lines(moment, reaction, structure.log.section_modulus, structure.log.shear_area)
+    sag = float(part.deflection[index])
+    if math.isfinite(sag):
+        second = structure.log.second_moment
+        bent = (
+            (load, "part line load"),
+            (span, "part length"),
+            (structure.log_stiffness / second, "stress"),
+            (second, "section second moment"),
+        )
+        lines.append(line("δ = 5·w·L⁴/(384·E·I) = 5·{}·{}⁴/(384·{}·{}) = {}", *bent, (sag, "deflection")))
+    return lines
 
 
 def _load_lines(barrier: AssessedClosure, part: Part, index: int) -> list[Line]:
@@ -212,8 +217,8 @@ def _anchor(barrier: AssessedClosure, index: int) -> Iterator[Step]:
     lines = []
     if anchor.lever_arm is not None and anchor.tension_bolts is not None:
         tension = _figure(part, "anchor_tension", index)
-        values = ((moment, "moment"), (anchor.lever_arm.value, "length"), (spare, "force"))
-        lines.append(line("T = M₀/a + U₊ = {}/{} + {} = {}", *values, (tension, "force")))
+        values = ((abs(moment), "moment"), (anchor.lever_arm.value, "length"), (spare, "force"))
+        lines.append(line("T = |M₀|/a + U₊ = {}/{} + {} = {}", *values, (tension, "force")))
         count = (float(anchor.tension_bolts), "number")
         lines.append(line("T₁ = T/n = {}/{} = {}", (tension, "force"), count, (bolt, "force")))
     if anchor.shear_bolts is not None:
@@ -226,8 +231,8 @@ def _anchor(barrier: AssessedClosure, index: int) -> Iterator[Step]:
     )
     yield Step(
         title=f"Anchors of {part.id}",
-        formula="T = M₀/a + U₊, U₊ what the brace lifts beyond the weight of the post, all of it given to "
-        "the bolts pulled; for a stiff plate T_i = M₀·d_i/Σd² + U₊/n; p_c = (|M₀|/a + what weight is "
+        formula="T = |M₀|/a + U₊, U₊ what the brace lifts beyond the weight of the post, all of it given to "
+        "the bolts pulled; for a stiff plate T_i = |M₀|·d_i/Σd² + U₊/n; p_c = (|M₀|/a + what weight is "
         "left)/contact area",
         terms=(
             term("M₀", "moment at the base", moment, "moment"),

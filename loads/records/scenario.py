@@ -14,10 +14,12 @@ from loads.records.closure import Closure
 from loads.records.crew import Crew, crew_problems
 from loads.records.fluid import FluidKind, Salinity, SuspendedSediment, Temperature, UnitWeight
 from loads.records.gauge import Gauge, gauge_problems
+from loads.records.i_wall import IWall
 from loads.records.moment import Moment, ZoneName
 from loads.records.panel import Elevation, Panel
 from loads.records.reading import Reading
 from loads.records.series import DataAge, StoredForecast, StoredObservation, series_problems
+from loads.records.wall import Wall
 
 FORMAT = 1
 """Version of the scenario format that this program writes; it reads every version up to it."""
@@ -88,6 +90,8 @@ class Scenario(Record):
     water: Water
     panel: Annotated[tuple[Panel, ...], Field(max_length=500)] = ()
     closure: Annotated[tuple[Closure, ...], Field(max_length=500)] = ()
+    wall: Annotated[tuple[Wall, ...], Field(max_length=500)] = ()
+    i_wall: Annotated[tuple[IWall, ...], Field(max_length=500)] = ()
     reading: Annotated[tuple[Reading, ...], Field(max_length=200)] = ()
     gauge: Annotated[tuple[Gauge, ...], Field(max_length=50)] = ()
     crew: Annotated[tuple[Crew, ...], Field(max_length=100)] = ()
@@ -95,7 +99,9 @@ class Scenario(Record):
     observed: Annotated[tuple[StoredObservation, ...], Field(max_length=50)] = ()
     data_age: DataAge = DataAge()
 
-    @field_validator("panel", "closure", "reading", "gauge", "crew", "forecast", "observed", mode="before")
+    @field_validator(
+        "panel", "closure", "wall", "i_wall", "reading", "gauge", "crew", "forecast", "observed", mode="before"
+    )
     @classmethod
     def _list_becomes_tuple(cls, value: object) -> object:
         return tuple(value) if isinstance(value, list) else value
@@ -114,9 +120,9 @@ class Scenario(Record):
         return self
 
     @property
-    def barriers(self) -> tuple[Panel | Closure, ...]:
+    def barriers(self) -> tuple[Panel | Closure | Wall | IWall, ...]:
         """Everything that stands on the line, kind by kind, in the order of the file."""
-        return (*self.panel, *self.closure)
+        return (*self.panel, *self.closure, *self.wall, *self.i_wall)
 
 
 def scenario_schema() -> dict[str, Any]:

@@ -9,6 +9,8 @@ from typing import Literal
 
 from loads.units import from_si
 
+_DAYS_FROM = 96.0
+"""Hours from which a time span is told in days."""
 FigureKind = Literal["level", "difference", "rate", "duration"]
 
 
@@ -29,7 +31,8 @@ def in_both_units(figure: Figure) -> str:
     '3.05 m (10.00 ft)'
     """
     if figure.kind == "duration":
-        return f"{figure.value / 3600:.3g} h"
+        hours = figure.value / 3600
+        return f"{hours:.3g} h" if hours < _DAYS_FROM else f"{hours / 24:.0f} days"
     if figure.kind == "rate":
         metres, feet = figure.value * 3600, from_si(figure.value * 3600, "ft", "length")
         return f"{metres:.2f} m/h ({feet:.2f} ft/h)"

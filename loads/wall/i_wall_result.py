@@ -10,6 +10,7 @@ import numpy as np
 from loads.arrays import BoolArray, FloatArray
 from loads.checks import Check, Verdict, check_of, level_check, worst
 from loads.problems import Problem, ScenarioError
+from loads.recheck import Recheck
 from loads.records.i_wall import IWall
 from loads.states import Levels
 from loads.wall.forces import Waters
@@ -128,6 +129,30 @@ def assess_i_wall(record: IWall, levels: Levels, fluids: dict[str, Fluid], near_
     )
 
 
+def sums_above_ground(found: IWallResult) -> Recheck:
+    """Second computation of force above the protected-side ground and of its moment about that ground."""
+    record, states = found.record, found.levels.states
+    waters = Waters(
+        flood=found.fluids["flood"].unit_weight, protected=found.fluids["protected"].unit_weight
+    )
+    ground = np.full(states, record.ground("protected"))
+    force, moment, gross = sheet_sums(
+        record, found.levels, waters, ground, found.embedment.pressure.gradient
+    )
+    reach = record.top.value - ground
+    scale = np.where(gross > 0, gross, 1.0)
+    apart = (
+        np.maximum(np.abs(found.horizontal - force), np.abs(found.moment - moment) / reach) / scale
+    )
+    return Recheck(
+        horizontal=force,
+        vertical=np.zeros(states),
+        moment=moment,
+        difference=apart,
+        agrees=found.agrees & (apart <= _TOLERANCE),
+    )
+
+
 def _pressing(check: Check) -> float:
     return float(check.ratio[0]) if check.limit is not None else -1.0
 
@@ -168,6 +193,7 @@ def _checks(record: IWall, levels: Levels, values: dict[str, Any], near: float) 
             demand=np.full(levels.states, record.top.value - ground),
             limit=limits.exposed_height,
             near=near,
+            rises_with_water=False,
         ),
     ]
     for name, kind, figure, limit in (

@@ -205,7 +205,7 @@ def _first_limit(
         found = stability(section, states, site)
         checks = all_checks(record, section, states, site, found=found, near=near)
         held = [check for check in checks if check.limit is not None and check.rises_with_water]
-        return held, found.horizontal > 0
+        return held, found.horizontal >= 0
 
     def ratios(flood_side: FloatArray) -> FloatArray:
         held, forward = at(flood_side)

@@ -18,6 +18,7 @@ from loads.closure.layout import Layout
 from loads.closure.logs import simple_beam
 from loads.closure.post import PostForces, post_forces
 from loads.diagram import Diagram
+from loads.faces import StripFace, face_of
 from tests.closures import FULL, closure_scene
 from tests.scenes import filed
 
@@ -95,10 +96,9 @@ def test_fault_in_the_brace(monkeypatch: pytest.MonkeyPatch) -> None:
 
 
 def test_fault_in_the_width_of_the_whole(monkeypatch: pytest.MonkeyPatch) -> None:
-    sound = loads.barrier.face_of
-
     def narrower(panel: Any) -> Any:
-        face = sound(panel)
+        face = face_of(panel)
+        assert isinstance(face, StripFace)
         table = face.strip_table.copy()
         table[:, 2:] *= 1 - 1e-6
         return replace(face, strip_table=table)

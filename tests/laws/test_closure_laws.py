@@ -189,6 +189,47 @@ def test_every_check_reaches_its_limit_at_its_own_level(closure: dict[str, Any],
         assert below < 1 <= above
 
 
+@pytest.mark.parametrize("fixity", ["fixed", "pinned"])
+@pytest.mark.parametrize("name", ["bending moment", "shear", "deflection", "brace force", "bolt tension"])
+def test_a_braced_post_reaches_its_limit_whichever_way_it_bends(fixity: str, name: str) -> None:
+    """Limit set from the demand at one level; the post's own moment or deflection may be negative there."""
+    level = 3.3
+    closure = copy.deepcopy(FULL)
+    post = closure["post"]
+    post["brace"]["fixity"] = fixity
+    closure["limits"], closure["log"]["limits"], post["limits"] = {}, {}, {}
+    del closure["log"]["material"], post["material"]
+    post["modulus"] = "29000 ksi"
+    (check,) = [
+        check
+        for check in in_water(closure, (level, DRY)).checks
+        if check.name == name and check.subject.startswith("post")
+    ]
+    demand = abs(float(check.demand[0]))
+    fields = {
+        "bending moment": ("moment", "N·m"),
+        "shear": ("shear", "N"),
+        "deflection": ("deflection", "m"),
+        "brace force": ("brace_force", "N"),
+        "bolt tension": ("anchor_tension", "N"),
+    }
+    field, unit = fields[name]
+    post["limits"] = {field: f"{demand!r} {unit}"}
+    first = in_water(closure, (1.2, DRY)).first_limit
+    assert first is not None
+    assert first.level is not None
+    assert first.check == name
+    if (name, fixity) == ("deflection", "fixed"):  # the top swings back before it swings forward
+        assert first.level < level
+        ratios = [
+            check_of(in_water(closure, (first.level + shift, DRY)).checks, name).ratio[0]
+            for shift in (-MILLIMETRE, MILLIMETRE)
+        ]
+        assert ratios[0] < 1 <= ratios[1]
+    else:
+        assert first.level == pytest.approx(level, abs=MILLIMETRE)
+
+
 def test_a_limit_set_from_a_level_gives_that_level_back() -> None:
     demand = part_of(closure_under(SPARSE, flood_side="1.234 m"), "bay 1 log 1").moment[0]
     limits = {"moment": f"{float(demand)!r} N·m"}

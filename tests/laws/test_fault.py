@@ -8,7 +8,7 @@ from typing import Any
 import numpy as np
 import pytest
 
-import loads.assessment
+import loads.barrier
 import loads.load
 import loads.sediment
 from loads.arrays import FloatArray
@@ -146,7 +146,7 @@ def test_fault_in_the_sum_of_the_loads(monkeypatch: pytest.MonkeyPatch) -> None:
         return loads.load.loads_on(setting)[:-1]
 
     made = document("rectangle", MUD, SOIL)
-    assert_trips(made, lambda: monkeypatch.setattr(loads.assessment, "loads_on", all_but_one))
+    assert_trips(made, lambda: monkeypatch.setattr(loads.barrier, "loads_on", all_but_one))
 
 
 @pytest.mark.parametrize("part", ["horizontal", "vertical", "moment"])

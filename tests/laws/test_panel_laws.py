@@ -86,7 +86,7 @@ def test_pressure_is_that_of_the_definitions(document: Document, shares: list[fl
 
 def width_of(barrier: Assessed) -> Callable[[float], float]:
     """Width against distance along the face, from the entered record alone."""
-    panel = barrier.record
+    panel = barrier.setting.panel
     if panel.shape == "rectangle":
         assert panel.width is not None
         width = panel.width.value
@@ -192,7 +192,7 @@ def test_splitting_a_panel_in_two_changes_nothing(document: Document, share: flo
     whole = barrier_of(document)
     height = filed(document).panel[0].height
     assert height is not None
-    tilt = whole.record.tilt_angle
+    tilt = whole.setting.panel.tilt_angle
     cut = whole.face.bottom + share * height.value * math.sin(tilt)
     lower = {**panel, "height": text(share * height.value)}
     upper = {**panel, "id": "P2", "bottom": text(cut), "height": text((1 - share) * height.value)}

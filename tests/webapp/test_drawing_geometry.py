@@ -62,7 +62,7 @@ def test_section_is_as_wide_as_it_is_high(number_of_case: int) -> None:
     drawing = ET.fromstring(drawn(barrier, ODD["tilts"]))
     (face,) = paths(drawing, stroke_width="6")
     (x0, y0), (x1, y1) = corners(face)
-    tilt = barrier.record.tilt_angle
+    tilt = barrier.setting.panel.tilt_angle
     assert math.atan2(y0 - y1, x1 - x0) == pytest.approx(tilt, abs=0.002)
     length = math.hypot(x1 - x0, y1 - y0) * -axis(drawing)[1]
     assert length == pytest.approx(12, abs=0.05)
@@ -75,7 +75,7 @@ def test_arc_in_section_is_a_circle_about_its_centre(number_of_case: int) -> Non
     (face,) = paths(drawing, stroke_width="6")
     points = corners(face)
     per_pixel = -axis(drawing)[1] * 0.3048
-    arc_shape = barrier.record.arc_shape()
+    arc_shape = barrier.setting.panel.arc_shape()
     centre = (points[0][0] + arc_shape.centre_x / per_pixel, points[0][1] - arc_shape.centre_z / per_pixel)
     for point in points:
         assert math.dist(point, centre) * per_pixel == pytest.approx(arc_shape.radius, abs=0.01)
@@ -95,7 +95,7 @@ def test_arrow_in_the_section_of_an_arc_points_through_the_centre(
     every = paths(drawing)
     line = paths(drawing, stroke_width="3", stroke=LIGHT.ink, fill="none")[0]
     foot, per_pixel = corners(face)[0], -axis(drawing)[1] * 0.3048
-    shape = barrier.record.arc_shape()
+    shape = barrier.setting.panel.arc_shape()
     centre = (foot[0] + shape.centre_x / per_pixel, foot[1] - shape.centre_z / per_pixel)
     (x0, y0), (x1, y1) = corners(line)
     point = corners(every[every.index(line) + 1])[0]
@@ -133,7 +133,7 @@ def test_line_shows_heights_rated_levels_and_water_true_to_the_axis() -> None:
 def test_centre_of_pressure_across_agrees_with_many_small_cells() -> None:
     barrier = ODD["outline with a hole"].barriers[0]
     assert isinstance(barrier, Assessed)
-    rings = front_rings(barrier.record, barrier.face)
+    rings = front_rings(barrier.setting.panel, barrier.face)
     shape = Polygon(rings[0], rings[1:])
     force = moment = 0.0
     edges = np.linspace(barrier.face.bottom, barrier.face.top, 2001)
@@ -144,7 +144,7 @@ def test_centre_of_pressure_across_agrees_with_many_small_cells() -> None:
             push = float(barrier.diagram.pressure(np.array([part.centroid.y]))[0, 0]) * part.area
             force += push
             moment += push * part.centroid.x
-    found = centre_across(barrier.record, rings, barrier.diagram, 0)
+    found = centre_across(barrier.setting.panel, rings, barrier.diagram, 0)
     assert found == pytest.approx(moment / force, rel=1e-5)
     assert abs(found) > 0.1
 

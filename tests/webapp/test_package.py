@@ -114,11 +114,13 @@ def test_figures_are_those_of_the_engine_and_of_the_json(package: Package) -> No
     told = answer(assessment, package.document)
     for barrier, data in zip(assessment.barriers, told["barriers"], strict=True):
         assert isinstance(barrier, Assessed)
-        assert package.says(f"Panel {barrier.record.id} · {barrier.record.name}")
+        kind = barrier.record.kind
+        foot = {"panel": "bottom edge", "closure": "sill"}[kind]
+        assert package.says(f"{kind.capitalize()} {barrier.record.id} · {barrier.record.name}")
         load = data["load"]
         for name, value, kind in (
             ("Horizontal force H, toward the protected side", load["horizontal"], "force"),
-            ("Moment M about the bottom edge", load["moment"], "moment"),
+            (f"Moment M about the {foot}", load["moment"], "moment"),
         ):
             assert package.says(f"{name} {with_unit(value, kind, system, RESULT_DIGITS)}")
         height = elevation(load["line_of_action"], system, assessment.scenario.datum)

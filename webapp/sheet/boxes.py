@@ -43,6 +43,8 @@ def _fit_box(plan: Plan) -> Box:
     alarm = ""
     if max(plan.short) > 0:
         alarm = f"{span_text(short for short in plan.short if short)} too few in {_short_bays(plan)}"
+    if plan.stuck:
+        alarm = f"{span_text(plan.closure.in_place)} stand, none can be added"
     figure = f"{span_text(plan.fit)} of {span_text(plan.closure.on_hand)}"
     return Box(label="Fit now", figure=figure, lines=tuple(lines), alarm=alarm)
 
@@ -83,8 +85,8 @@ def _call_box(plan: Plan) -> Box:
     below = CALL_BELOW[plan.system][0]
     lines = (
         above_sill(call - plan.sill, plan.system),
-        f"{below} below the rated level {elevation(rated.value, plan.system)}",
+        f"{below} below rated level {elevation(rated.value, plan.system)}",
         source_words(rated, 26),
     )
-    alarm = "reached: call now" if plan.water >= call else ""
+    alarm = "reached: call now" if plan.call_reached else ""
     return Box(label="Call engineer at", figure=elevation(call, plan.system), lines=lines, alarm=alarm)

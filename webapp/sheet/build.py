@@ -25,7 +25,7 @@ from webapp.sheet.words import (
 
 BLANK = "_" * 10
 TIME_BLANK = "___ : ___"
-_WHERE_EMS, _NOTE_EMS, _SOURCE_EMS, _DATUM_EMS, _LIFT_EMS, _SHORT_EMS = 44.0, 84.0, 26.0, 26.0, 22.0, 76.0
+_WHERE_EMS, _NOTE_EMS, _SOURCE_EMS, _DATUM_EMS, _LIFT_EMS, _SHORT_EMS = 44.0, 84.0, 42.0, 26.0, 22.0, 76.0
 _MOST_GROUPS = 3
 _MORE = "more in the scenario file"
 
@@ -172,19 +172,18 @@ def _people(closure: Closure) -> Iterator[str]:
 def adding_lines(plan: Plan) -> list[tuple[str, bool]]:
     """Whether logs can be added with water at the sill, from where, up to what level."""
     adding, system = plan.closure.adding, plan.system
-    sill = elevation(plan.sill, system)
     if adding is None:
         return [("Adding logs with water at the sill: not entered. Do not count on it.", True)]
     if not adding.with_water:
+        sill = elevation(plan.sill, system)
         text = f"Logs CANNOT be added once water is at the sill. Last chance: below {sill}."
-        gone = plan.water > plan.sill
     else:
         side = "either side" if adding.side == "either" else f"the {adding.side} side"
         if adding.up_to is None:
             return [(f"Logs CAN be added from {side}; up to what level was not entered.", True)]
-        text = f"Logs CAN be added from {side}. Last chance: below {elevation(adding.up_to.value, system)}."
-        gone = plan.water > adding.up_to.value
-    return [(f"{text} The water is past it." if gone else text, True)]
+        last = elevation(adding.up_to.value, system)
+        text = f"Logs CAN be added from {side}. Last chance: below {last}."
+    return [(f"{text} The water is past it." if plan.adding_is_over else text, True)]
 
 
 def removal_lines(closure: Closure) -> list[str]:

@@ -16,7 +16,7 @@ SIZES = (13.0, 12.5, 12.0, 11.5, 11.0, 10.5, 10.0, 9.5, 9.0)
 """Sizes of type that are tried, the largest first; a sheet of usual length is set in 12 pt or more. [pt]"""
 LINE = 1.16
 """Height of a line over the size of the type."""
-PICTURE = (58.0, 43.0)
+PICTURE = (58.0, 47.0)
 """Width and height of the picture of the stack. [mm]"""
 CODE = 37.0
 """Side of the picture of the link. [mm]"""

@@ -17,7 +17,7 @@ WIDTH, HEIGHT = 240.0, 240.0 * PICTURE[1] / PICTURE[0]
 _LEFT, _TOP, _FOOT, _POST, _GAP = 60.0, 8.0, 20.0, 6.0, 12.0
 _SIZE = 13.5
 _MOST_COLUMNS = 3
-_NUMBER_STEP, _JOINT_STEP = 11.0, 2.2
+_NUMBER_STEP, _JOINT_STEP = 12.0, 2.2
 _STEPS = (1, 2, 5, 10, 20, 50, 100)
 
 
@@ -127,14 +127,15 @@ def _joints(column: _Column, scale: _Scale) -> list[int]:
 def _numbers(column: _Column, scale: _Scale) -> list[int]:
     """Rows that are numbered: all where there is room, else every second, fifth and so on, and the top."""
     step = next((step for step in _STEPS if step * scale.step >= _NUMBER_STEP), _STEPS[-1])
-    rows = {row for row in range(1, column.on_hand + 1) if step == 1 or row % step == 0 or row == 1}
+    rows = {1, *(row for row in range(1, column.on_hand + 1) if row % step == 0)}
+    rows = {row for row in rows if row == 1 or row - 1 >= step}
     if column.fit:
         rows = {row for row in rows if abs(row - column.fit) >= step or row == column.fit} | {column.fit}
     return sorted(rows)
 
 
 def _number(column: _Column, scale: _Scale, row: int) -> Svg:
-    size = min(_SIZE + 2, max(scale.step * 0.9, _SIZE - 3))
+    size = min(_SIZE + 2, max(scale.step * 0.9, _SIZE - 1))
     middle = (scale.y(row) + scale.y(row - 1)) / 2
     there = row <= column.fit
     x, text = (column.left + column.right) / 2, str(row)

@@ -101,6 +101,28 @@ class Plan:
         rated = self.closure.rated_level
         return None if rated is None else rated.value - CALL_BELOW[self.system][1]
 
+    @property
+    def call_reached(self) -> bool:
+        """Whether the water stands at the level at which the engineer is called."""
+        return self.call_level is not None and self.water >= self.call_level - SAME_LEVEL
+
+    @property
+    def adding_is_over(self) -> bool:
+        """Whether the water is past the level up to which logs can be added; False where none was entered."""
+        adding = self.closure.adding
+        if adding is None:
+            return False
+        if not adding.with_water:
+            return self.water > self.sill + SAME_LEVEL
+        return adding.up_to is not None and self.water > adding.up_to.value + SAME_LEVEL
+
+    @property
+    def stuck(self) -> bool:
+        """Whether logs are asked for above those that stand, and none can be added any more."""
+        entered = self.closure.logs_in_place is not None
+        more = any(fit > placed for fit, placed in zip(self.fit, self.closure.in_place, strict=True))
+        return entered and more and self.adding_is_over
+
     def top_of(self, count: int) -> float:
         """Top of so many logs. [m]."""
         return self.sill + count * self.layout.log_height

@@ -9,7 +9,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from loads.assessment import AssessedClosure
-from loads.checks import SEVERITY, Verdict
+from loads.checks import Verdict
 from loads.part import Part
 from webapp.display import elevation, significant
 from webapp.part_words import first_words, parts_text
@@ -18,6 +18,16 @@ from webapp.sheet.words import above_sill, cut, sentence, source_words, span_tex
 
 _RATED_EMS, _CHECKS_EMS = 44.0, 62.0
 _MOST_CHECKS = 3
+PRESSING: tuple[Verdict, ...] = ("above limit", "near limit")
+"""Verdicts whose checks are named."""
+_SAID_ELSEWHERE = (
+    "Parts short",
+    "Water stands at the sill: no more logs",
+    "The water stands above the level up to which logs",
+    "The level with its allowance",
+    "The guides or seals bear one way only",
+    "No logs are in place",
+)
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -58,10 +68,8 @@ def first_limit_line(plan: Plan) -> str:
     what = first_words(first, "closure")
     if first.without_water:
         return f"First limit: {what} is above its limit with no water on the sill (computed, for screening)."
-    return (
-        f"First-limit level {elevation(first.level, plan.system)}: {what}. Computed for screening, no leave "
-        "to let the water rise to it."
-    )
+    level = elevation(first.level, plan.system)
+    return f"First-limit level {level} ({what}): computed, for screening, no rated level."
 
 
 def load_table(plan: Plan) -> LoadTable:
@@ -114,31 +122,33 @@ def load_notes(plan: Plan) -> list[str]:
     if len(plan.built.levels.flood_side) > 1 and float(plan.built.levels.flood_side[1]) > layout.lowest_top:
         top = elevation(layout.lowest_top, plan.system)
         notes.append(f"At the rated level water goes over the logs, top {top}.")
-    return [" ".join([*notes, pressing_text(plan)])]
+    notes.append(pressing_text(plan))
+    if len(plan.built.levels.flood_side) > 1 and plan.built.verdict(1) in ("near limit", "above limit"):
+        notes.append(pressing_text(plan, 1))
+    return [" ".join(notes)]
 
 
-def pressing_text(plan: Plan) -> str:
-    """Checks that are above or near their limits now, else the one with the largest ratio."""
-    checks = plan.built.checks
+def pressing_text(plan: Plan, index: int = 0) -> str:
+    """Checks that are above or near their limits in a state, else the one with the largest ratio."""
+    checks, when = plan.built.checks, ("Now", "At the rated level")[index]
     by_verdict: dict[Verdict, dict[str, list[str]]] = defaultdict(lambda: defaultdict(list))
     for check in checks:
-        by_verdict[check.verdict()][check.name].append(check.subject)
+        by_verdict[check.verdict(index)][check.name].append(check.subject)
     told = []
-    for verdict in reversed(SEVERITY[2:]):
+    for verdict in PRESSING:
         names = by_verdict.get(verdict, {})
         texts = [_check_text(name, subjects) for name, subjects in list(names.items())[:_MOST_CHECKS]]
         if len(names) > _MOST_CHECKS:
             texts.append(f"{len(names) - _MOST_CHECKS} more")
         told += [f"{verdict}: {', '.join(texts)}"] if texts else []
     if told:
-        return sentence(f"Now {cut('; '.join(told), _CHECKS_EMS)}")
-    graded = (check for check in checks if check.verdict() != "not checked")
-    lead = next(graded, None)
+        return sentence(f"{when} {cut('; '.join(told), _CHECKS_EMS)}")
+    lead = next((check for check in checks if check.verdict() != "not checked"), None)
     if lead is None:
-        return "Now not checked: no limit was entered."
+        return f"{when} not checked: no limit was entered."
     name = cut(_check_text(lead.name, [lead.subject]), _CHECKS_EMS - 20)
     ratio = significant(float(lead.ratio[0]), 3)
-    return sentence(f"Now below the limits entered; largest ratio {ratio}, {name}")
+    return sentence(f"{when} below the limits entered; largest ratio {ratio}, {name}")
 
 
 def _check_text(name: str, subjects: list[str]) -> str:
@@ -148,4 +158,4 @@ def _check_text(name: str, subjects: list[str]) -> str:
 
 def remark_texts(plan: Plan) -> list[str]:
     """Remarks that no other line of the sheet makes."""
-    return [text for text in plan.built.remarks if not text.startswith("Parts short")]
+    return [text for text in plan.built.remarks if not text.startswith(_SAID_ELSEWHERE)]

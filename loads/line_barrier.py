@@ -15,7 +15,7 @@ from loads.clock import Clock, LeadTimes, Timeline, clock_of
 from loads.gauge_conversion import Conversion
 from loads.install_time import InstallTime, Pieces, install_time
 from loads.instant import unknown
-from loads.line_watch import GaugeNews, marks_of
+from loads.line_watch import GaugeNews, foot_of, marks_of
 from loads.log_advice import LogAdvice, log_advice
 from loads.moments import utc
 from loads.records.closure import Closure
@@ -25,7 +25,6 @@ from loads.records.panel import Panel
 from loads.records.scenario import Scenario
 from loads.records.series import StoredForecast
 from loads.records.wall import Wall
-from loads.wall.assess import head_foot
 
 LAST_READING = "last reading"
 """Name of the state of a chain that is no forecast."""
@@ -94,7 +93,6 @@ def barrier_news(
         Neighbours of a series further apart than this say nothing about what lies between. [s]
     """
     record = barrier.record
-    assert isinstance(record, (Panel, Closure))
     states, chain = _chain(scenario, record, news, way)
     marks = marks_of(barrier, way)
     if isinstance(record, Closure):
@@ -141,11 +139,7 @@ def _chain(
     if not stages:
         return (), None
     reading = GaugeReading.of(np.array(list(stages.values())), *_pedigree(scenario, news))
-    if isinstance(record, Wall | IWall):
-        foot = head_foot(record)[0]
-    else:
-        foot = record.sill if isinstance(record, Closure) else record.bottom
-    return tuple(stages), chain_of(way, reading, foot, scenario.datum)
+    return tuple(stages), chain_of(way, reading, foot_of(record), scenario.datum)
 
 
 def _pedigree(scenario: Scenario, news: GaugeNews) -> tuple[str, date | None]:

@@ -78,7 +78,7 @@ def _series(
     offsets = [moment.utcoffset() or timedelta(0) for moment, _ in points]
     return Series(
         name=name or kind,
-        parameter="elevation" if datum else "gauge height",
+        parameter="gauge height",
         kind=kind,
         times=np.array([_instant(moment) for moment, _ in points], dtype="datetime64[s]"),
         utc_offsets=np.array([round(offset / timedelta(minutes=1)) for offset in offsets], dtype=np.int16),

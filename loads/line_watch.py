@@ -11,6 +11,7 @@ from loads.clock import ClockMarks
 from loads.crossing import LimitLevel, traces_of
 from loads.gauge_conversion import Conversion
 from loads.line_series import forecast_in, observed_in, thresholds_of
+from loads.quantity import Quantity
 from loads.records.closure import Closure
 from loads.records.gauge import Gauge
 from loads.records.i_wall import IWall
@@ -130,11 +131,11 @@ def _traps(gauge: Gauge, observed: Series | None, newest: Issue | None) -> tuple
     return found if jump is None else (*found, jump)
 
 
-def foot_level(record: Panel | Closure | Wall | IWall) -> float:
-    """Elevation of the sill, bottom or ground from which water stands against a barrier. [m]."""
+def foot_of(record: Panel | Closure | Wall | IWall) -> Quantity:
+    """The sill, bottom or ground from which water stands against a barrier."""
     if isinstance(record, Wall | IWall):
-        return head_foot(record)[0].value
-    return record.sill.value if isinstance(record, Closure) else record.bottom.value
+        return head_foot(record)[0]
+    return record.sill if isinstance(record, Closure) else record.bottom
 
 
 def limits_of(barrier: Barrier, way: Conversion) -> tuple[LimitLevel, ...]:
@@ -171,7 +172,7 @@ def marks_of(barrier: Barrier, way: Conversion) -> ClockMarks:
     record = barrier.record
     limits = limits_of(barrier, way)
     if not isinstance(record, Closure):
-        return ClockMarks(sill=foot_level(record), limits=limits)
+        return ClockMarks(sill=foot_of(record).value, limits=limits)
     clock, adding = record.clock, record.adding
     allowance = clock.wave_allowance if clock else None
     removal = clock.removal_stage if clock else None

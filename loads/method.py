@@ -17,8 +17,8 @@ from loads.limits_of_use import LimitOfUse
 from loads.method_clock import CLOCK
 from loads.method_closure import CLOSURE_WATER, CLOSURES
 from loads.method_data import Method, MethodGroup
-from loads.method_wall import WALLS
 from loads.method_reading import READINGS
+from loads.method_wall import WALLS
 from loads.recheck import FITTED_TOLERANCE, STRAIGHT_TOLERANCE
 
 _ICE_POINT = 273.15

@@ -7,11 +7,14 @@ from __future__ import annotations
 
 import math
 
-from loads.assessment import Assessed, AssessedClosure
+from loads.assessment import Assessed, AssessedClosure, AssessedWall
 from loads.checks import Check
 from loads.closure.working import closure_steps
 from loads.faces import ArcFace, CircleFace, StripFace
 from loads.load import SIDES
+from loads.wall.i_wall_result import IWallResult
+from loads.wall.i_wall_working import i_wall_working
+from loads.wall.wall_working import wall_working
 from loads.worked_step import Line, Step, Table, Term, line, term
 from loads.working_arc import arc_steps
 from loads.working_face import pressure_at, segments, slices
@@ -35,6 +38,11 @@ def working(barrier: Assessed, index: int = 0) -> tuple[Step, ...]:
     tuple of Step
         Heads, sediment, pressures, slices or segments, resultant, ratios to the limits entered.
     """
+    if isinstance(barrier, AssessedWall):
+        found = barrier.found
+        if isinstance(found, IWallResult):
+            return i_wall_working(found, index)
+        return wall_working(found, index)
     face = barrier.face
     steps = [_heads(barrier, index), *soil_steps(barrier, index), _pressures(barrier, index)]
     if isinstance(face, StripFace):

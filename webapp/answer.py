@@ -7,7 +7,7 @@ from collections.abc import Mapping
 from typing import Any
 
 from loads import __version__
-from loads.assessment import Assessed, AssessedClosure, Assessment, Barrier, Withheld, assess
+from loads.assessment import Assessed, AssessedClosure, AssessedWall, Assessment, Barrier, Withheld, assess
 from loads.cautions import CAUTIONS
 from loads.document import input_digest
 from loads.faces import Resultant
@@ -18,6 +18,7 @@ from loads.units import SI_UNITS
 from loads.working import Step, Term, working
 from webapp.answer_closure import closure_answer
 from webapp.answer_parts import check_answer, first_limit_answer, number, part_answer
+from webapp.answer_wall import wall_about, wall_answer
 from webapp.reading_levels import readings_answer
 
 SCHEMA = "sillhead/1"
@@ -104,7 +105,11 @@ def _barrier(barrier: Barrier, index: int) -> dict[str, Any]:
     }
     if not isinstance(barrier, Assessed):
         return {**head, **_withheld(barrier)}
-    more = closure_answer(barrier, index) if isinstance(barrier, AssessedClosure) else {}
+    more: dict[str, Any] = {}
+    if isinstance(barrier, AssessedClosure):
+        more = closure_answer(barrier, index)
+    elif isinstance(barrier, AssessedWall):
+        more = wall_answer(barrier, index)
     return {**head, **_results(barrier, index), **more}
 
 
@@ -147,7 +152,9 @@ def _results(barrier: Assessed, index: int) -> dict[str, Any]:
 def _load(barrier: Assessed, index: int) -> dict[str, Any]:
     return {
         **_resultant(barrier.resultant, index),
-        "about": {"x": 0.0, "z": barrier.face.bottom},
+        "about": wall_about(barrier)
+        if isinstance(barrier, AssessedWall)
+        else {"x": 0.0, "z": barrier.face.bottom},
         "line_of_action": number(barrier.resultant.line_of_action[index]),
         "by_load": {
             name: {"horizontal": float(part.horizontal[index]), "moment": float(part.moment[index])}

@@ -9,6 +9,7 @@ from loads.checks import Check
 from loads.first_limit import FirstLimit
 from loads.part import Part
 from loads.units import SI_UNITS
+from webapp.display import PLAIN
 
 
 def part_answer(part: Part, index: int) -> dict[str, Any]:
@@ -34,7 +35,7 @@ def check_answer(check: Check, index: int) -> dict[str, Any]:
         "check": check.name,
         "demand": float(check.demand[index]),
         "limit": number(check.limit_value),
-        "unit": SI_UNITS[kind],
+        "unit": "" if kind in PLAIN else SI_UNITS[kind],
         "ratio": number(check.ratio[index]),
         "verdict": check.verdict(index),
         "source": check.source,

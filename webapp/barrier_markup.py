@@ -7,10 +7,10 @@ from collections.abc import Sequence
 
 from loads.assessment import Assessed, AssessedClosure, Withheld
 from webapp.closure_markup import stack_figure
-from webapp.display import PRINT_DIGITS, System, elevation, foot_of, pedigree, show, show_all
-from webapp.markup import escaped, head_on, ratio_words, table, verdict_mark
+from webapp.display import PRINT_DIGITS, System, elevation, foot_of, load_kind, pedigree, show, show_all
+from webapp.markup import escaped, ratio_words, table, verdict_mark
 from webapp.part_words import check_title, first_words
-from webapp.text_table import disagreement_text, first_limit_text
+from webapp.text_table import disagreement_text, first_limit_text, head_on
 
 
 def headline(barrier: Assessed, system: System) -> str:
@@ -74,11 +74,12 @@ def levels_note(barrier: Assessed, system: System) -> str:
             "never in place of the rated level."
         )
     agreed = barrier.recheck
+    force, moment = (load_kind(barrier.record.kind, kind) for kind in ("force", "moment"))
     apart = float(agreed.difference[0])
     closeness = f"largest difference {apart:.0e} of the figure" if apart else "equal to rounding"
     second = (
-        f"Second computation: force {show(float(agreed.horizontal[0]), 'force', system, PRINT_DIGITS)}, "
-        f"moment {show(float(agreed.moment[0]), 'moment', system, PRINT_DIGITS)}; {closeness}."
+        f"Second computation: force {show(float(agreed.horizontal[0]), force, system, PRINT_DIGITS)}, "
+        f"moment {show(float(agreed.moment[0]), moment, system, PRINT_DIGITS)}; {closeness}."
     )
     return "".join(f'<div class="sh-note">{escaped(text)}</div>' for text in (words, computed, second))
 
@@ -86,8 +87,8 @@ def levels_note(barrier: Assessed, system: System) -> str:
 def states_table(barrier: Assessed, labels: Sequence[str], system: System) -> str:
     """Force and moment in neighbouring states, with the change from the present one."""
     found = barrier.resultant
-    forces = show_all([float(v) for v in found.horizontal], "force", system)
-    moments = show_all([float(v) for v in found.moment], "moment", system)
+    forces = show_all([float(v) for v in found.horizontal], load_kind(barrier.record.kind, "force"), system)
+    moments = show_all([float(v) for v in found.moment], load_kind(barrier.record.kind, "moment"), system)
     rows = [
         [
             escaped(label),

@@ -29,7 +29,7 @@ class Group:
     check
         The check of the first of them.
     others
-        How many more parts have this check, each of them pressed less.
+        How many more parts have this check, none of them pressed harder.
     """
 
     parts: str
@@ -57,12 +57,10 @@ def check_groups(barrier: Assessed) -> list[Group]:
 
 
 def _alike(check: Check, first: Check) -> bool:
+    """Whether two checks have the same ratio in every state computed."""
     if check is first:
         return True
-    ours, theirs = float(check.ratio[0]), float(first.ratio[0])
-    if np.isnan(ours) or np.isnan(theirs):
-        return False
-    return ours == theirs or abs(ours - theirs) <= _ALIKE * abs(theirs)
+    return bool(np.allclose(check.ratio, first.ratio, rtol=_ALIKE, atol=0.0))
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -100,7 +98,7 @@ def limits_reached(barrier: Assessed, most: int) -> list[Reached]:
             subject
             for one in firsts
             if one.level is not None and one.level - level <= _SAME_LEVEL
-            for subject in _alike_subjects(barrier, one, checks[lead.subject, lead.check])
+            for subject in _alike_subjects(barrier, one, {other.subject for other in firsts})
         ]
         found.append(Reached(parts=parts_text(together), first=lead, check=checks[lead.subject, lead.check]))
     return found
@@ -112,12 +110,14 @@ def _first_limits(barrier: Assessed) -> Sequence[FirstLimit]:
     return (barrier.first_limit,) if barrier.first_limit else ()
 
 
-def _alike_subjects(barrier: Assessed, first: FirstLimit, lead: Check) -> list[str]:
+def _alike_subjects(barrier: Assessed, first: FirstLimit, own_level: set[str]) -> list[str]:
     """Part of a first limit, and those that carry the same, since of like parts only one is searched."""
+    lead = next(c for c in barrier.checks if (c.subject, c.name) == (first.subject, first.check))
     same = [
         check.subject
         for check in barrier.checks
         if check.name == first.check
+        and check.subject not in own_level
         and class_of(check.subject) == class_of(first.subject)
         and _alike(check, lead)
     ]

@@ -48,7 +48,7 @@ def checks_table(barrier: Assessed, system: System, more: str) -> str:
     for group in check_groups(barrier):
         check = group.check
         parts = group.parts if not check.subject.startswith("closure") else "closure"
-        others = f"<br><small>and {group.others} more, less pressed</small>" if group.others else ""
+        others = f"<br><small>and {group.others} more, none pressed harder</small>" if group.others else ""
         words = ". ".join(text.rstrip(".") for text in (check.source, *check.remarks)) + "."
         if words not in notes:
             notes.append(words)

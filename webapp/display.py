@@ -251,10 +251,22 @@ def foot_of(kind: str) -> str:
 
     Examples
     --------
-    >>> foot_of("closure"), foot_of("panel")
-    ('sill', 'bottom')
+    >>> foot_of("closure"), foot_of("panel"), foot_of("wall")
+    ('sill', 'bottom', 'toe')
     """
-    return "sill" if kind == "closure" else "bottom"
+    return {"closure": "sill", "wall": "toe"}.get(kind, "bottom")
+
+
+def load_kind(barrier: str, kind: str) -> str:
+    """Kind in which force and moment of a kind of barrier are shown: those of a wall are per length.
+
+    Examples
+    --------
+    >>> load_kind("wall", "force"), load_kind("closure", "moment")
+    ('line load', 'moment')
+    """
+    per_length = {"force": "line load", "moment": "moment per length"}
+    return per_length.get(kind, kind) if barrier == "wall" else kind
 
 
 def system_of(scenario: Scenario) -> System:

@@ -25,6 +25,7 @@ from loads.records.reading import ManometerLeg, Reading
 from loads.records.scenario import Scenario, Water
 from loads.records.sediment import Sediment
 from loads.units import EXAMPLES
+from webapp.clock_form import CLOCK_PEDIGREED, CLOCK_RECORDS
 from webapp.closure_form import CLOSURE_FORM
 
 SHAPE_FIELDS: dict[str, tuple[str, ...]] = {
@@ -70,6 +71,7 @@ RECORDS: dict[str, type[Record]] = {
     "reading": Reading,
     "reading.leg": ManometerLeg,
     **{part.record_name: part.record for part in CLOSURE_FORM},
+    **CLOCK_RECORDS,
 }
 
 _LIMITS = (Limits, LogLimits, PostLimits)
@@ -79,6 +81,7 @@ _PEDIGREED = {"rated_level", "allowance", "sill", "capacity", "limit", "pump_cap
 def has_pedigree(record: str, field: Field) -> bool:
     """Whether a form asks for source and date of a value too: of limits and of what decides."""
     own = issubclass(RECORDS[record], _LIMITS) or field.name in _PEDIGREED
+    own = own or (record, field.name) in CLOCK_PEDIGREED
     return own and field.kind == "quantity"
 
 

@@ -9,6 +9,7 @@ from loads.checks import Check
 from webapp.check_groups import Reached, limits_reached
 from webapp.display import System, elevation, show
 from webapp.markup import escaped, ratio_cell, subheading, table, verdict_mark
+from webapp.part_words import check_title, first_words
 
 _MOST = 6
 
@@ -25,11 +26,11 @@ def limit_cell(check: Check, system: System) -> str:
     return f"{words}, factored {show(check.limit_value, check.kind, system)}"
 
 
-def check_table(checks: Sequence[Check], system: System, more: str) -> str:
-    """Checks of one barrier, the most pressing first, with what one more foot makes of them."""
+def check_table(checks: Sequence[Check], system: System, more: str, kind: str) -> str:
+    """Checks of one barrier of a kind, the most pressing first, with what one more foot makes of them."""
     rows = [
         [
-            escaped(check.name),
+            escaped(check_title(check, kind)),
             verdict_mark(check.verdict()),
             show(float(check.demand[0]), check.kind, system),
             limit_cell(check, system),
@@ -63,7 +64,7 @@ def first_row(barrier: Assessed, system: System, more: str) -> str:
 
 def _what(barrier: Assessed, reached: Reached) -> str:
     if reached.first.subject.startswith(barrier.record.kind):
-        return escaped(reached.first.check)
+        return escaped(first_words(reached.first, barrier.record.kind))
     return escaped(f"{reached.parts}, {reached.first.check}")
 
 

@@ -19,6 +19,7 @@ page = st.navigation(
         st.Page(HERE / "views" / "forecast.py", title="Forecast", url_path="forecast"),
         st.Page(HERE / "views" / "inputs.py", title="Inputs", url_path="inputs"),
         st.Page(HERE / "views" / "readings.py", title="Readings", url_path="readings"),
+        st.Page(HERE / "views" / "options.py", title="Options", url_path="options"),
         st.Page(HERE / "views" / "sheets.py", title="Sheets and links", url_path="sheets"),
         st.Page(HERE / "views" / "method.py", title="Method and cautions", url_path="method"),
     ],

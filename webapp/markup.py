@@ -15,6 +15,7 @@ from webapp.display import (
     as_entered,
     barrier_title,
     elevation,
+    load_kind,
     moment_text,
     pedigree,
     show,
@@ -22,7 +23,7 @@ from webapp.display import (
     significant,
 )
 from webapp.part_words import check_title
-from webapp.text_table import disagreement_text, first_limit_text
+from webapp.text_table import disagreement_text, first_limit_text, head_on
 
 VERDICT_CLASS: dict[Verdict, str] = {
     "below limit": "sh-below",
@@ -124,11 +125,13 @@ def line_table(assessment: Assessment, system: System) -> str:
 
 
 def _column(barriers: Sequence[Barrier], kind: str, system: System) -> list[str]:
-    values = [_figure(barrier, kind) for barrier in barriers]
-    return [
-        "" if math.isnan(value) else text
-        for value, text in zip(values, show_all(values, kind, system), strict=True)
-    ]
+    found = [""] * len(barriers)
+    for shown in (kind, load_kind("wall", kind)):
+        own = [i for i, barrier in enumerate(barriers) if load_kind(barrier.record.kind, kind) == shown]
+        values = [_figure(barriers[i], kind) for i in own]
+        for i, value, text in zip(own, values, show_all(values, shown, system), strict=True):
+            found[i] = "" if math.isnan(value) else text
+    return found
 
 
 def _figure(barrier: Barrier, kind: str) -> float:
@@ -160,11 +163,6 @@ def _line_row(barrier: Barrier, system: System, force: str, moment: str) -> list
     ]
 
 
-def head_on(barrier: Assessed) -> float:
-    """Head of the flood side on the bottom, nil below it. [m]."""
-    return max(float(barrier.levels.flood_side[0]) - barrier.face.bottom, 0.0)
-
-
 def line_cards(assessment: Assessment, system: System) -> str:
     """Flood line for a phone: one card for each barrier, in the order of the scenario."""
     return (
@@ -186,8 +184,8 @@ def _card(barrier: Barrier, system: System) -> str:
         if check.limit
         else "no limit entered"
     )
-    force = show(float(barrier.resultant.horizontal[0]), "force", system)
-    moment = show(float(barrier.resultant.moment[0]), "moment", system)
+    force = show(float(barrier.resultant.horizontal[0]), load_kind(record.kind, "force"), system)
+    moment = show(float(barrier.resultant.moment[0]), load_kind(record.kind, "moment"), system)
     return (
         f'<div class="sh-card">{name}<span class="figure">{force}</span><span>{mark}</span>'
         f'<small class="right">{moment}</small><small>{governs}</small>'

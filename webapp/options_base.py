@@ -9,14 +9,15 @@ from typing import Any
 
 from loads.problems import Problem
 from loads.quantity import read_quantity
-from loads.scenario_file import BARRIER_KEYS, Document
+from loads.scenario_file import Document
 from loads.units import from_si
 from webapp.barrier_state import barrier_titles
 from webapp.display import System, barrier_title
 from webapp.state import Session, replace_document, typed_level
 
-STARTS = {"start T": "A T-wall to start from", "start gravity": "A gravity wall to start from"}
-"""Walls that are not in the scenario; no id has a blank and a small first letter by chance alone."""
+_START = "\n"
+STARTS = {f"{_START}T": "A T-wall to start from", f"{_START}gravity": "A gravity wall to start from"}
+"""Walls that are not in the scenario; no id is like theirs."""
 START_FIELDS = ("base", "height", "unit_weight", "friction_angle", "flood_ground", "protected_ground")
 """What is typed for a start; the friction angle is that of the base on the ground."""
 MOST_BESIDE = 4
@@ -28,7 +29,7 @@ _SIZES: dict[System, dict[str, dict[str, str]]] = {
             "top_width": "1 ft",
             "stem_width": "1.5 ft",
             "base_thickness": "2 ft",
-            "heel": "6 ft",
+            "heel": "13 ft",
             "toe": "3 ft",
             "unit_weight": "150 pcf",
         },
@@ -45,7 +46,7 @@ _SIZES: dict[System, dict[str, dict[str, str]]] = {
             "top_width": "0.3 m",
             "stem_width": "0.45 m",
             "base_thickness": "0.6 m",
-            "heel": "1.8 m",
+            "heel": "4 m",
             "toe": "0.9 m",
             "unit_weight": "23.5 kN/m3",
         },
@@ -75,8 +76,8 @@ def start_table(document: Document, chosen: str, system: System) -> dict[str, An
     unit, below = _BELOW[system]
     level = read_quantity(typed_level(document, "flood_side"), "length")[0]
     base = math.floor(from_si(level, unit, "length") - below)
-    shape = chosen.removeprefix("start ")
-    taken = set(barrier_titles(document)) | {str(one["id"]) for one in document.get("wall", ())}
+    shape = chosen.removeprefix(_START)
+    taken = set(barrier_titles(document))
     return {
         "id": next(f"W{n}" for n in range(1, len(taken) + 2) if f"W{n}" not in taken),
         "name": "from options",
@@ -120,7 +121,7 @@ def put_into(session: Session, table: Mapping[str, Any]) -> tuple[Problem, ...]:
 
 def as_another(document: Document, table: Mapping[str, Any]) -> dict[str, Any]:
     """Candidate under an id that is free."""
-    taken = {str(one["id"]) for kind in {*BARRIER_KEYS, "wall"} for one in document.get(kind, ())}
+    taken = set(barrier_titles(document))
     stem = str(table["id"])[:18]
     free = next(f"{stem}-{n}" for n in range(2, len(taken) + 3) if f"{stem}-{n}" not in taken)
     return {**copy.deepcopy(dict(table)), "id": free}

@@ -69,9 +69,7 @@ def dimension_names(record: Wall) -> list[str]:
 def value_of(record: Wall, name: str) -> str:
     """Value of a dimension as typed, or as it follows from what was typed."""
     entered = (
-        getattr(record.key, name.removeprefix("key_"))
-        if name.startswith("key_")
-        else getattr(record, name)
+        getattr(record.key, name.removeprefix("key_")) if name.startswith("key_") else getattr(record, name)
     )
     if entered is not None:
         return str(entered.text)

@@ -1,31 +1,28 @@
-"""Options of a wall: the base, the ranges, the grid of candidates, one candidate in full. No Streamlit."""
+"""Options of a wall: the grid of candidates, where each stands, the least material. No Streamlit."""
 
 from __future__ import annotations
 
-import copy
 import json
-from collections.abc import Callable, Mapping, Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
-from typing import Any
 
 import numpy as np
 
-from loads.arrays import FloatArray
-from loads.assessment import Assessment
-from loads.checks import Check, Verdict, worst
-from loads.problems import Problem, ScenarioError
+from loads.barrier import Site
+from loads.limits_of_use import OutsideFormulaError
 from loads.records.wall import Wall
-from loads.scenario_file import Document, scenario_of
-from loads.wall.criteria import CriteriaSet
+from loads.scenario_file import Document
 from loads.wall.options import OptionGrid, option_grid
-from loads.wall.recheck import recheck_wall
-from loads.wall.section import area_and_centroid
-from loads.wall.section_of_record import section_of
-from loads.wall.site_of_record import site_of
-from loads.wall.stability import stability
-from loads.wall.wall_checks import criteria_of
-from loads.wall.wall_result import all_checks
-from webapp.options_ranges import Range, value_of
+from webapp.options_candidate import (
+    Candidate,
+    Table,
+    candidate_of,
+    candidate_table,
+    limits_elsewhere,
+    no_answer,
+    wall_of,
+)
+from webapp.options_ranges import Range
 from webapp.state import Session
 
 WITHIN, IMPOSSIBLE, UNHELD = -1, -2, -3
@@ -33,128 +30,12 @@ WITHIN, IMPOSSIBLE, UNHELD = -1, -2, -3
 MOST_CONFIRMED = 150
 """How many candidates are checked one by one to find the least material within every limit."""
 _SAME = 1e-9
-_HELD_ELSEWHERE = (
-    *(f"{part}_{what}" for part in ("stem", "heel", "toe") for what in ("shear", "moment")),
-    "freeboard",
-)
-
-Table = dict[str, Any]
-
-
-@dataclass(frozen=True, kw_only=True)
-class Candidate:
-    """One wall with all its checks in the state of the scenario.
-
-    Attributes
-    ----------
-    record
-        What was computed.
-    checks
-        Every check, the most pressing first; none where the two computations disagree.
-    agrees
-        Whether both computations give the same.
-    material
-        Area of the section. [m²]
-    criteria
-        The set in force; None without one.
-    """
-
-    record: Wall
-    checks: tuple[Check, ...]
-    agrees: bool
-    material: float
-    criteria: CriteriaSet | None
-
-    @property
-    def held(self) -> tuple[Check, ...]:
-        """Checks that have a limit."""
-        return tuple(check for check in self.checks if check.limit is not None)
-
-    @property
-    def verdict(self) -> Verdict:
-        """Most pressing verdict."""
-        return worst([check.verdict() for check in self.checks]) if self.agrees else "withheld"
-
-    @property
-    def within(self) -> bool:
-        """Whether there is a limit and none is passed."""
-        return self.verdict in ("below limit", "near limit")
-
-
-def wall_of(document: Document, table: Mapping[str, Any]) -> Wall:
-    """Record of a wall's table in the scenario's water.
-
-    Raises
-    ------
-    ScenarioError
-        The table is no wall.
-    """
-    kept = {name: document[name] for name in ("format", "title", "datum", "water")}
-    return scenario_of({**kept, "wall": [dict(table)]}).wall[0]
-
-
-def candidate_of(record: Wall, site: Assessment) -> Candidate:
-    """Compute one wall in the first state of an assessment.
-
-    Raises
-    ------
-    ScenarioError
-        A name that no table knows.
-    """
-    section, place = section_of(record), site_of(record, site.fluids)
-    found = stability(section, site.levels, place)
-    agrees = bool(recheck_wall(section, site.levels, place, found).agrees.all())
-    near = site.scenario.near_limit
-    checks = all_checks(record, section, site.levels, place, found=found, near=near) if agrees else []
-    return Candidate(
-        record=record,
-        checks=tuple(sorted(checks, key=lambda check: -_pressing(check))),
-        agrees=agrees,
-        material=float(sum(area_and_centroid(part.x, part.z)[0].item() for part in section.parts)),
-        criteria=criteria_of(record),
-    )
-
-
-def _pressing(check: Check) -> float:
-    if check.limit is None:
-        return -1.0
-    ratio = float(check.ratio[0])
-    return ratio if np.isfinite(ratio) else float("inf")
-
-
-def limits_elsewhere(record: Wall) -> tuple[str, ...]:
-    """Limits of a wall that the grid does not hold, in words; they are checked candidate by candidate."""
-    names = [name.replace("_", " ") for name in _HELD_ELSEWHERE if getattr(record.limits, name) is not None]
-    return (*names, *(("rated level",) if record.rated_level else ()))
-
-
-def candidate_table(base: Mapping[str, Any], record: Wall, sizes: Mapping[str, str]) -> Table:
-    """Table of a wall with dimensions as typed, everything else as in the base.
-
-    Parameters
-    ----------
-    base, record
-        Table and record of the base.
-    sizes
-        Dimension and its text, such as "8.5 ft".
-    """
-    table = copy.deepcopy(dict(base))
-    if record.shape != "gravity" and "stem_width" not in table:
-        table["stem_width"] = value_of(record, "stem_width")
-    for name, text in sizes.items():
-        if name.startswith("key_"):
-            table["key"] = {**table["key"], name.removeprefix("key_"): text}
-        else:
-            table[name] = text
-    if table["shape"] == "L" and "heel" in table and "toe" in table:
-        table["shape"] = "T"
-    return table
 
 
 def grid_of(
     session: Session,
     record: Wall,
-    site: Assessment,
+    site: Site,
     ranges: Sequence[Range],
     progress: Callable[[float], None] | None = None,
 ) -> OptionGrid:
@@ -171,17 +52,15 @@ def grid_of(
     mark = json.dumps([record.model_dump(mode="json"), typed, water, levels, site.scenario.near_limit])
     if session.get("options mark") != mark:
         values = {one.name: one.values for one in ranges}
-        session["options grid"] = option_grid(
-            record,
-            site.levels,
-            site.fluids,
-            values,
-            near_limit=site.scenario.near_limit,
-            progress=progress,
-        )
+        near = site.scenario.near_limit
+        try:
+            grid = option_grid(record, site.levels, site.fluids, values, near_limit=near, progress=progress)
+        except OutsideFormulaError as error:
+            raise no_answer(record, error) from None
+        session["options grid"] = grid
         session["options mark"] = mark
-    grid: OptionGrid = session["options grid"]
-    return grid
+    kept: OptionGrid = session["options grid"]
+    return kept
 
 
 def standing(grid: OptionGrid) -> np.ndarray[tuple[int, ...], np.dtype[np.intp]]:
@@ -213,6 +92,51 @@ def sizes_of(ranges: Sequence[Range], places: Sequence[int]) -> dict[str, str]:
 
 
 @dataclass(frozen=True, kw_only=True)
+class Options:
+    """A grid of candidates with what it was made from.
+
+    Attributes
+    ----------
+    document
+        Of the scenario.
+    base, record
+        Table and record of the wall that gives everything that does not vary.
+    ranges
+        Of the dimensions that vary.
+    grid
+        Their candidates.
+    """
+
+    document: Document
+    base: Table
+    record: Wall
+    ranges: Sequence[Range]
+    grid: OptionGrid
+
+    def table_of(self, number: int) -> Table:
+        """Table of a candidate, as the scenario would hold it."""
+        sizes = sizes_of(self.ranges, places_of(self.grid, number))
+        return candidate_table(self.base, self.record, sizes)
+
+    def record_of(self, number: int) -> Wall:
+        """Record of a candidate.
+
+        Raises
+        ------
+        ScenarioError
+            Its dimensions make no section.
+        """
+        return wall_of(self.document, self.table_of(number))
+
+    @property
+    def within(self) -> str:
+        """What a candidate that keeps the limits of the grid is called."""
+        if limits_elsewhere(self.record):
+            return "within every limit of stability, bearing and seepage entered"
+        return "within every limit entered"
+
+
+@dataclass(frozen=True, kw_only=True)
 class Least:
     """Least material among the candidates within every limit.
 
@@ -231,11 +155,9 @@ class Least:
     left: int
 
 
-def least_of(
-    grid: OptionGrid, site: Assessment, made: Callable[[int], Wall], most: int = MOST_CONFIRMED
-) -> Least:
+def least_of(grid: OptionGrid, site: Site, made: Callable[[int], Wall], most: int = MOST_CONFIRMED) -> Least:
     """Go through the candidates within the grid's limits, least material first, until one keeps them all."""
-    numbers: FloatArray = np.flatnonzero(standing(grid) == WITHIN)
+    numbers = np.flatnonzero(standing(grid) == WITHIN)
     order = numbers[np.argsort(grid.material[numbers], kind="stable")]
     for tried, number in enumerate(order[:most], 1):
         candidate = candidate_of(made(int(number)), site)
@@ -256,8 +178,3 @@ def matches(grid: OptionGrid, number: int, candidate: Candidate) -> bool:
         one == other or (np.isnan(one) and np.isnan(other)) or abs(one - other) <= _SAME * abs(other)
         for one, other in ours
     )
-
-
-def problem_words(error: ScenarioError) -> tuple[Problem, ...]:
-    """Problems of an error, each once."""
-    return tuple(dict.fromkeys(error.problems))

@@ -11,6 +11,7 @@ from loads.first_limit import FirstLimit
 
 _LOG = re.compile(r"bay (\d+) log (\d+)")
 _POST = re.compile(r"post (\d+)")
+_MEMBER = re.compile(r", (stem|heel|toe)$")
 
 
 def log_place(part: str) -> tuple[int, int] | None:
@@ -104,9 +105,16 @@ def bay_groups(keys: Sequence[object]) -> list[tuple[int, ...]]:
 
 def check_title(check: Check, kind: str) -> str:
     """Name of a check with the part it is about; of a whole barrier of a kind the name alone."""
-    return check.name if check.subject.startswith(kind) else f"{check.subject} {check.name}"
+    return _titled(check.subject, check.name, kind)
+
+
+def _titled(subject: str, name: str, kind: str) -> str:
+    member = _MEMBER.search(subject) if kind == "wall" else None
+    if member:
+        return f"{member[1]} {name}"
+    return name if subject.startswith(kind) else f"{subject} {name}"
 
 
 def first_words(first: FirstLimit, kind: str) -> str:
     """Check that reaches its limit first, with the part it is about."""
-    return first.check if first.subject.startswith(kind) else f"{first.subject} {first.check}"
+    return _titled(first.subject, first.check, kind)

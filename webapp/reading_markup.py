@@ -54,6 +54,8 @@ def _level_words(found: LevelReading, system: System) -> str:
 
 
 def _range(low: float, high: float, system: System) -> str:
+    if low == high:
+        return "not known"
     ends = [elevation(float(end), system) if math.isfinite(end) else "not known" for end in (low, high)]
     return " to ".join(ends)
 
@@ -81,7 +83,7 @@ def chain_cards(found: LevelReading, system: System) -> str:
 
 def _card(found: LevelReading, link: Link, system: System) -> str:
     value, low, high = _figures(found, link, system)
-    band = f"{low} to {high}" if low != high else "no range"
+    band = f"{low} to {high}" if (low, high) != ("–", "–") else "no range"
     return (
         f'<div class="sh-card"><b>{escaped(link.symbol)}</b><span class="figure">{value}</span>'
         f"<small>{escaped(link.meaning)}</small>"
@@ -95,6 +97,8 @@ def _figures(found: LevelReading, link: Link, system: System) -> list[str]:
     if link.name == "level" and found.dry[0]:
         return ["sensor dry", "–", "–"]
     kind = "elevation" if link.name in _ELEVATIONS else link.kind
+    if figures[1] == figures[2]:
+        figures = (figures[0], math.nan, math.nan)
     return [show(value, kind, system, PRINT_DIGITS) if math.isfinite(value) else "–" for value in figures]
 
 

@@ -7,10 +7,12 @@ import unicodedata
 from collections.abc import Mapping, Sequence
 
 from loads import __version__
-from loads.assessment import Assessed, Assessment, Barrier
+from loads.assessment import Assessed, AssessedWall, Assessment, Barrier
 from loads.cautions import HEADLINE
 from loads.document import check_code, input_digest
-from webapp.display import NO_BREAK, THOUSANDS, System, elevation, show, significant
+from loads.wall.assess import head_foot
+from webapp.display import NO_BREAK, THOUSANDS, System, elevation, load_kind, show, significant
+from webapp.part_words import check_title
 
 _HEADINGS = (
     "id",
@@ -30,6 +32,10 @@ _LEGEND = (
     "force: horizontal, positive toward the protected side; moment: about the bottom edge or the sill; first "
     "limit: computed, a screening figure"
 )
+_WALL_LEGEND = (
+    "walls: per unit of length; moment about the toe, of an I-wall about the protected-side ground; head "
+    "above the ground"
+)
 
 
 def table_text(assessment: Assessment, document: Mapping[str, object]) -> str:
@@ -47,6 +53,7 @@ def table_text(assessment: Assessment, document: Mapping[str, object]) -> str:
         "",
         *_remarks(assessment.barriers),
         _LEGEND,
+        *([_WALL_LEGEND] if scenario.wall or scenario.i_wall else []),
         f"Sillhead {__version__}. {HEADLINE}",
     ]
     return plain("\n".join(lines))
@@ -59,22 +66,29 @@ def _row(barrier: Barrier, system: System) -> tuple[str, ...]:
         return (panel.id, panel.name, "withheld", "", "", "", "", "", "", rated, "")
     worst = barrier.checks[0]
     part = "" if worst.subject.startswith(panel.kind) else f"{worst.subject}, "
+    title = check_title(worst, panel.kind) if panel.kind == "wall" else f"{part}{worst.name}"
     checked = worst.limit is not None
     action = float(barrier.resultant.line_of_action[0])
-    head = max(float(barrier.levels.flood_side[0]) - barrier.face.bottom, 0.0)
+    kind = panel.kind
     return (
         panel.id,
         panel.name,
         barrier.verdict(),
         significant(float(worst.ratio[0]), 3) if checked else "",
-        f"{part}{worst.name}" if checked else "no limit entered",
-        show(head, "length", system),
-        show(float(barrier.resultant.horizontal[0]), "force", system),
-        show(float(barrier.resultant.moment[0]), "moment", system),
+        title if checked else "no limit entered",
+        show(head_on(barrier), "length", system),
+        show(float(barrier.resultant.horizontal[0]), load_kind(kind, "force"), system),
+        show(float(barrier.resultant.moment[0]), load_kind(kind, "moment"), system),
         elevation(action, system) if math.isfinite(action) else "–",
         rated,
         first_limit_text(barrier, system),
     )
+
+
+def head_on(barrier: Assessed) -> float:
+    """Head of the flood side on the bottom, or on the ground at a wall; nil below it. [m]."""
+    foot = head_foot(barrier.record)[0].value if isinstance(barrier, AssessedWall) else barrier.face.bottom
+    return max(float(barrier.levels.flood_side[0]) - foot, 0.0)
 
 
 def first_limit_text(barrier: Assessed, system: System) -> str:

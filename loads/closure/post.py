@@ -245,7 +245,7 @@ def _extremes(bent: _Bent, height: float) -> tuple[FloatArray, FloatArray, Float
     piece = high - low
     at_low, at_high = load.pressure(low), load.pressure(high, at_underside=True)
     start = bent.shear(low)
-    with np.errstate(divide="ignore", invalid="ignore"):
+    with np.errstate(divide="ignore", invalid="ignore", over="ignore"):
         bend = (at_high - at_low) / (2 * piece)
         root = np.sqrt(at_low**2 + 4 * bend * start)
         q = -(at_low + np.where(at_low < 0, -root, root)) / 2

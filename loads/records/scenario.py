@@ -100,7 +100,16 @@ class Scenario(Record):
     data_age: DataAge = DataAge()
 
     @field_validator(
-        "panel", "closure", "wall", "i_wall", "reading", "gauge", "crew", "forecast", "observed", mode="before"
+        "panel",
+        "closure",
+        "wall",
+        "i_wall",
+        "reading",
+        "gauge",
+        "crew",
+        "forecast",
+        "observed",
+        mode="before",
     )
     @classmethod
     def _list_becomes_tuple(cls, value: object) -> object:

@@ -24,7 +24,7 @@ _level = Measure(
     example="23.1 ft",
 )
 Point = Annotated[tuple[Moment, Annotated[Quantity, _level]], Field(strict=False)]
-Points = Annotated[tuple[Point, ...], Field(min_length=1, max_length=MOST_POINTS, strict=False)]
+Points = Annotated[tuple[Point, ...], Field(max_length=MOST_POINTS, strict=False)]
 
 
 def _band(meaning: str) -> Measure:
@@ -92,6 +92,8 @@ class StoredForecast(Record):
 
 
 def _time_problems(field: str, points: Sequence[tuple[Any, Quantity]]) -> list[Triple]:
+    if not points:
+        return [(field, "", "has no reading; it needs at least one")]
     return [
         (f"{field}[{i}]", later.isoformat(), "it must be later than the time before it")
         for i, ((earlier, _), (later, _)) in enumerate(pairwise(points), 1)

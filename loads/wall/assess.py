@@ -85,9 +85,7 @@ def assess_wall_of_line(record: Wall, site: Site) -> Barrier:
     """Assess one wall on its base."""
     found = assess_wall(record, site.levels, site.fluids, site.scenario.near_limit)
     top = float(found.section.top.max())
-    setting = Setting(
-        levels=site.levels, fluids=site.fluids, panel=_upright(record, record.base.value, top)
-    )
+    setting = Setting(levels=site.levels, fluids=site.fluids, panel=_upright(record, record.base.value, top))
     stable, second = found.stability, found.recheck
     nil = np.zeros(site.levels.states)
     across = sum((row.moment for row in stable.forces if row.direction == "horizontal"), nil)
@@ -96,9 +94,7 @@ def assess_wall_of_line(record: Wall, site: Site) -> Barrier:
         setting,
         found,
         recheck,
-        resultant=_resultant(
-            record.base.value, stable.horizontal, stable.vertical, stable.moment, across
-        ),
+        resultant=_resultant(record.base.value, stable.horizontal, stable.vertical, stable.moment, across),
         first_limit=found.first_limit,
     )
 

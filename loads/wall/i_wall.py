@@ -6,6 +6,7 @@ ground, or from the bottom of the gap, down to the tip and up to where it leaves
 
 from __future__ import annotations
 
+from collections.abc import Callable
 from dataclasses import dataclass
 
 import numpy as np
@@ -30,7 +31,9 @@ NO_GAP = (
 SEARCH = 6.0
 """Embedments are sought down to this many times the exposed height below the protected-side ground. [–]"""
 _POINTS = 241
-_HALVINGS = 60
+_STEPS = 60
+_CLOSED = 1e-11
+"""Width of a bracket that is left. [m]"""
 _RIGHT = np.pi / 2
 
 Term = tuple[FloatArray, FloatArray, FloatArray]
@@ -189,7 +192,7 @@ def embedment(wall: IWall, levels: Levels, waters: Waters) -> Embedment:
     -----
     The depth is the least one below which net pressure, passive over its factor, no longer turns the top
     toward the protected side; the fixity below the tip is allowed for by the increase. Sought by a sweep of
-    depths and halving.
+    depths and the secant between two of them.
     """
     states = levels.states
     ground = wall.ground("protected")
@@ -211,10 +214,9 @@ def embedment(wall: IWall, levels: Levels, waters: Waters) -> Embedment:
     low = start - depths[np.minimum(last, _POINTS - 2)]
     high = start - depths[np.minimum(last, _POINTS - 2) + 1]
     high = np.where(drives, high, low)
-    for _ in range(_HALVINGS):
-        middle = (low + high) / 2
-        over = turning(middle, levels) > 0
-        low, high = np.where(over, middle, low), np.where(over, high, middle)
+    at = np.minimum(last, _POINTS - 2), np.arange(states)
+    ends = values[at], np.where(drives, values[at[0] + 1, at[1]], values[at])
+    high = _nil_between(lambda tip: turning(tip, levels), (low, high), ends)
     balanced = np.where(found, ground - high, np.nan)
     tip = np.where(found, high, wall.tip.value)
     return Embedment(
@@ -224,6 +226,33 @@ def embedment(wall: IWall, levels: Levels, waters: Waters) -> Embedment:
         found=found,
         pressure=sheet_pressure(wall, levels, waters, tip),
     )
+
+
+def _nil_between(
+    turning: Callable[[FloatArray], FloatArray],
+    bracket: tuple[FloatArray, FloatArray],
+    ends: tuple[FloatArray, FloatArray],
+) -> FloatArray:
+    """Place just beyond which a moment is no longer positive, by the secant kept within its bracket.
+
+    The end whose value stays is given half of it (the rule of Illinois); every fourth step halves, so that
+    the bracket always closes.
+    """
+    low, high = bracket
+    at_low, at_high = ends
+    for step in range(_STEPS):
+        if np.all(np.abs(high - low) <= _CLOSED):
+            break
+        drop = at_low - at_high
+        share = np.divide(at_low, drop, out=np.full_like(low, 0.5), where=drop > 0)
+        share = np.full_like(low, 0.5) if step % 4 == 3 else np.clip(share, 0.0, 1.0)
+        middle = low + (high - low) * share
+        value = turning(middle)
+        over = value > 0
+        at_high = np.where(over, at_high / 2, value)
+        at_low = np.where(over, value, at_low / 2)
+        low, high = np.where(over, middle, low), np.where(over, high, middle)
+    return high
 
 
 def sheet_extremes(net: Diagram, top: float, tip: FloatArray) -> tuple[FloatArray, FloatArray]:

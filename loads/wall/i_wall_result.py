@@ -132,18 +132,12 @@ def assess_i_wall(record: IWall, levels: Levels, fluids: dict[str, Fluid], near_
 def sums_above_ground(found: IWallResult) -> Recheck:
     """Second computation of force above the protected-side ground and of its moment about that ground."""
     record, states = found.record, found.levels.states
-    waters = Waters(
-        flood=found.fluids["flood"].unit_weight, protected=found.fluids["protected"].unit_weight
-    )
+    waters = Waters(flood=found.fluids["flood"].unit_weight, protected=found.fluids["protected"].unit_weight)
     ground = np.full(states, record.ground("protected"))
-    force, moment, gross = sheet_sums(
-        record, found.levels, waters, ground, found.embedment.pressure.gradient
-    )
+    force, moment, gross = sheet_sums(record, found.levels, waters, ground, found.embedment.pressure.gradient)
     reach = record.top.value - ground
     scale = np.where(gross > 0, gross, 1.0)
-    apart = (
-        np.maximum(np.abs(found.horizontal - force), np.abs(found.moment - moment) / reach) / scale
-    )
+    apart = np.maximum(np.abs(found.horizontal - force), np.abs(found.moment - moment) / reach) / scale
     return Recheck(
         horizontal=force,
         vertical=np.zeros(states),

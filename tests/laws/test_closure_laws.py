@@ -24,7 +24,7 @@ SILT = {
     "friction_angle": "27 deg",
     "pressure": "at rest",
 }
-few = settings(max_examples=25)
+few = settings(max_examples=15)
 
 
 @st.composite
@@ -146,7 +146,7 @@ def reached(barrier: AssessedClosure) -> bool:
     )
 
 
-@settings(max_examples=12)
+@settings(max_examples=6)
 @given(closures(), st.one_of(st.just(DRY), st.floats(1.0, 2.5)))
 def test_first_limit_is_where_assess_finds_it(closure: dict[str, Any], behind: float) -> None:
     barrier = in_water(closure, (1.2, behind))
@@ -167,7 +167,7 @@ def test_first_limit_is_where_assess_finds_it(closure: dict[str, Any], behind: f
     assert pushes(check_of(named.checks, first.check, first.subject)) >= 1
 
 
-@settings(max_examples=12)
+@settings(max_examples=6)
 @given(closures(), st.one_of(st.just(DRY), st.floats(1.0, 2.5)))
 def test_every_check_reaches_its_limit_at_its_own_level(closure: dict[str, Any], behind: float) -> None:
     barrier = in_water(closure, (1.2, behind))

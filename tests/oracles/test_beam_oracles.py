@@ -218,7 +218,8 @@ def test_extremes_are_no_less_than_any_point(terms: Terms, brace: float | None, 
     found = solved(terms, 4.0, brace, fixity)
     diagram = Diagram.of_terms(1, terms)
     push = float(found.brace_force[0]) if brace else 0.0
-    x = np.unique([*np.linspace(0.0, 4.0, 801), *([brace] if brace else [])])
+    corners = sorted({0.0, 4.0, *([brace] if brace else []), *(k for k, _, _ in terms)})
+    x = np.unique(np.concatenate([np.linspace(*ends, 401) for ends in pairwise(corners)]))
     held = np.where(x < (brace or 0.0), push, 0.0)
     shear = np.abs(diagram.shear(x)[0] - held).max()
     moment = np.abs(diagram.moment(x)[0] - push * np.maximum((brace or 0.0) - x, 0.0)).max()

@@ -20,7 +20,7 @@ from webapp.links import decode_document, encode_document
 from webapp.scenario_files import example_files
 
 MAIN = ROOT / "webapp" / "main.py"
-PAGES = ("flood_line", "barrier", "inputs", "sheets", "method")
+PAGES = ("flood_line", "barrier", "forecast", "inputs", "sheets", "method")
 US_UNITS = re.compile(rf"[\d.]{NO_BREAK}(ft|lb|kip|psf|pcf|kip·ft|lb·ft)\b")
 SI_UNITS = re.compile(rf"[\d.]{NO_BREAK}(m|kN|kPa|kN·m)\b")
 

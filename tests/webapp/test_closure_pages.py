@@ -12,9 +12,11 @@ import pytest
 from playwright.sync_api import Page, expect
 from streamlit.testing.v1 import AppTest
 
+from loads.assessment import Assessed
 from loads.scenario_file import Document, write_document
-from tests.webapp.closure_cases import POST, closure, line
+from tests.webapp.closure_cases import POST, assessed_line, closure, line
 from tests.webapp.driving import ROOT, Server, Watch
+from webapp.check_groups import limits_reached
 from webapp.display import elevation
 from webapp.links import decode_document, encode_document
 
@@ -172,3 +174,19 @@ def test_the_flood_line_lists_closures_with_the_part_that_presses() -> None:
     assert "C1 · Closure C1" in text
     assert "bay 1 log 1 line load" in text
     assert text.index("P1") < text.index("C1 · Closure C1") < text.index("C2 · Closure C2")
+
+
+def test_parts_share_a_row_only_while_they_carry_the_same() -> None:
+    post = {key: value for key, value in POST.items() if key != "brace"}
+    limited = post | {"limits": {"moment": {"value": "8 kip·ft", "source": "engineer of record"}}}
+    alike, apart = (
+        assessed_line(closure(post=limited, logs_in_place=counts, log={"limits": {}})).barriers[0]
+        for counts in (8, [8, 8, 10])
+    )
+    assert isinstance(alike, Assessed)
+    assert isinstance(apart, Assessed)
+    (row,) = limits_reached(alike, 6)
+    assert row.parts == "posts 1, 2"
+    (row,) = limits_reached(apart, 6)
+    # both posts carry the same now; above the lower stacks the third bay bears on post 2 alone
+    assert row.parts == "post 2"

@@ -204,3 +204,51 @@ def test_several_gauges_in_one_text_need_one_of_this_name(document: Document) ->
         document, Pasted(data=text.replace("A,", "09999999,").encode(), gauge="G1", source="s")
     )
     assert [level for _, level in changed["observed"][0]["points"]] == ["22 ft", "22.4 ft"]
+
+
+def press(test: AppTest, form: str, label: str = "Take these values") -> AppTest:
+    (button,) = [
+        one for one in test.button if one.key and one.key.startswith(f"FormSubmitter:{form}-{label}")
+    ]
+    return run(button.click())
+
+
+def test_a_gauge_and_its_way_to_a_barrier_are_entered_in_forms() -> None:
+    tannery = next(path for path in SCENARIOS if path.stem == "tannery-row")
+    test = on(app(read_file(tannery)), "forecast")
+    revision = test.session_state["revision"]
+    for name, value in (("id", "G1"), ("datum", "NAVD88"), ("zero", "80 ft")):
+        test.text_input(key=f"field {revision}.gauge.0.{name}").set_value(value)
+    test.text_input(key=f"field {revision}.gauge.0.zero source").set_value("levelling")
+    test = press(test, f"form {revision}.gauge.0")
+    assert messages(test) == []
+    (gauge,) = test.session_state["document"]["gauge"]
+    assert gauge == {"id": "G1", "datum": "NAVD88", "zero": {"value": "80 ft", "source": "levelling"}}
+    revision = test.session_state["revision"]
+    test.text_area(key=f"field {revision}.gauge.0.transfer.0.to").set_value("P1\nP2")
+    test.text_input(key=f"field {revision}.gauge.0.transfer.0.offset").set_value("-0.5 ft")
+    test = press(test, f"form {revision}.gauge.0.transfer.0")
+    assert messages(test) == []
+    (way,) = test.session_state["document"]["gauge"][0]["transfer"]
+    assert way == {"to": ["P1", "P2"], "offset": "-0.5 ft"}
+
+
+def test_a_drill_entered_on_the_page_moves_the_call_out(document: Document) -> None:
+    test = opened(document)
+    revision = test.session_state["revision"]
+    place = f"{revision}.closure.0.clock.drill.0"
+    test.text_input(key=f"field {place}.date").set_value("2031-03-01")
+    test.text_input(key=f"field {place}.install_time").set_value("8.5 h")
+    test = press(test, f"form {place}")
+    assert messages(test) == []
+    assert call_out(test, "C-07", "likely") == "20:09 CDT Wed 2 Apr 2031"
+    assert "the drill of 2031-03-01 makes it 1 h longer than planned" in html.unescape(words(test))
+
+
+def test_a_crew_that_is_not_whole_is_refused_beside_its_form(document: Document) -> None:
+    test = opened(document)
+    before, revision = test.session_state["document"], test.session_state["revision"]
+    test.text_input(key=f"field {revision}.crew.0.people").set_value("eight")
+    test = press(test, f"form {revision}.crew.0")
+    assert any("it must be a whole number" in message for message in messages(test))
+    assert test.session_state["document"] == before

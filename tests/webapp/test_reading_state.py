@@ -350,6 +350,16 @@ def test_the_page_shows_every_link_in_both_unit_systems(house: Document) -> None
                 assert words_of_method in text
 
 
+def test_a_level_without_any_low_and_high_has_no_range(house: Document) -> None:
+    for name in ("zero_elevation", "staff_reading"):
+        house["reading"][0][name] = house["reading"][0][name]["value"]
+    text = words(readings_page(house, "STAFF"))
+    assert text.count("<b>not known</b>") == 2, "by either way of combining"
+    assert "No low and high was entered for any link" in text
+    changed = reading_state.with_level_of(house, found_in(house, "STAFF"), "US")
+    assert set(changed["water"]["flood_side"]) == {"value", "source", "date"}
+
+
 def test_markup_in_a_reading_is_shown_as_text(house: Document) -> None:
     house["reading"][0]["zero_elevation"] |= {"source": "<b>x</b> *y*"}
     house["datum"] = "<i>z</i>"

@@ -21,6 +21,7 @@ from webapp.drawing.scale import Scale
 from webapp.drawing.sheet import Sheet
 from webapp.drawing.stack_shape import StackShape
 from webapp.drawing.svg import Point
+from webapp.drawing.wall_shape import outline_across
 
 _MARK = 15.0
 _LEAST_DRAWN = 9.0
@@ -108,8 +109,7 @@ def draw_column(sheet: Sheet, column: Column, scale: Scale) -> None:
     """Draw the ground below a barrier and the barrier itself."""
     if not column.within(scale):
         return
-    face = column.reading.face
-    ground = scale.clamped(face.bottom)
+    ground = scale.clamped(column.reading.foot_level)
     if ground < scale.lower:
         for fill in (sheet.palette.ground, sheet.fill("soil")):
             sheet.rectangle(column.left, ground, column.room, scale.lower - ground, fill=fill)
@@ -129,8 +129,10 @@ def draw_column(sheet: Sheet, column: Column, scale: Scale) -> None:
 
 
 def seen_from_front(reading: Reading) -> list[list[Point]]:
-    """Outline of a barrier, (across from its middle, elevation), holes after it. [m]."""
+    """Outline of a barrier, (across from its middle, elevation), holes after it; a wall in section. [m]."""
     stack = reading.stack
+    if reading.wall:
+        return [outline_across(reading.wall)]
     if stack is None:
         return front_rings(reading.panel, reading.face)
     return [[(x - stack.width / 2, z) for x, z in stack.outline]]

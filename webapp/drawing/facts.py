@@ -19,6 +19,7 @@ from webapp.drawing.reading import (
     ratio_text,
     reverse_text,
 )
+from webapp.drawing.wall_facts import wall_facts
 from webapp.part_words import bay_groups, numbered, parts_text
 from webapp.part_words import first_words as words_of_first
 
@@ -45,12 +46,13 @@ def facts(barrier: Barrier, *, index: int = 0, system: System, datum: str) -> tu
     sentences = [f"{reading.title}: {reading.verdict}"]
     sentences += [_level_fact(reading, side) for side in ("flood", "protected")]
     sentences += [_capital(text) for text in (*over_top_texts(reading), reverse_text(reading)) if text]
-    sentences += _load_facts(reading) + _limit_facts(reading) + _closure_facts(reading)
+    sentences += wall_facts(reading) if reading.wall else _load_facts(reading)
+    sentences += _limit_facts(reading) + _closure_facts(reading)
     return tuple(f"{sentence}." for sentence in sentences)
 
 
 def _level_fact(reading: Reading, side: str) -> str:
-    level, bottom = reading.level(side), reading.face.bottom
+    level, bottom = reading.level(side), reading.foot_level
     if not math.isfinite(level):
         return f"{_capital(side)} side dry"
     head = f"{reading.length(level - bottom)} above" if level > bottom else "not above"

@@ -5,7 +5,7 @@ from __future__ import annotations
 import math
 from dataclasses import dataclass
 
-from webapp.display import show, unit_label
+from webapp.display import load_kind, show, unit_label
 from webapp.drawing.measure import shortened, text_width, wrapped
 from webapp.drawing.pressure import load_texts
 from webapp.drawing.reading import Reading, check_words, over_top_texts, ratio_text, reverse_text
@@ -102,9 +102,9 @@ def agreement(reading: Reading) -> list[str]:
     """What the second computation found; no figures of a load that is withheld."""
     if reading.assessed is None:
         return ["second computation disagrees:", "no result is shown"]
-    index, system = reading.index, reading.system
+    index, system, kind = reading.index, reading.system, load_kind(reading.record.kind, "force")
     first, second = (
-        show(abs(float(result.horizontal[index])), "force", system, _COMPARED_DIGITS)
+        show(abs(float(result.horizontal[index])), kind, system, _COMPARED_DIGITS)
         for result in (reading.assessed.resultant, reading.assessed.recheck)
     )
     return ["second computation agrees:", f"{first} against {second}"]

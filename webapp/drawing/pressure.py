@@ -32,8 +32,19 @@ def value_room(view: View) -> float:
     return text_width("00000", view.size) + 8
 
 
-def draw_pressure(view: View, room: float, rise: float) -> None:
+def draw_pressure(view: View, room: float, rise: float, span: Row | None = None) -> None:
     """Draw the diagram within the view's width less `room` at the right, which is for text.
+
+    Parameters
+    ----------
+    view
+        Where.
+    room
+        For text. [px]
+    rise
+        Of the heading above the diagram. [px]
+    span
+        Elevations between which it is drawn, those of the face when None. [m]
 
     Notes
     -----
@@ -48,10 +59,11 @@ def draw_pressure(view: View, room: float, rise: float) -> None:
         )
         return
     face = view.reading.face
-    rows = assessed.diagram.rows(face.bottom, face.top, view.reading.index)
+    low, high = span or (face.bottom, face.top)
+    rows = assessed.diagram.rows(low, high, view.reading.index)
     base, factor = _horizontal_scale(view, rows, room)
     _draw_diagram(view, rows, base, factor)
-    _draw_arrows(view, assessed, base, factor)
+    _draw_arrows(view, assessed, (low, high), base, factor)
     _write_values(view, rows, base, factor)
     _draw_resultant(view, assessed, base, factor)
 
@@ -78,14 +90,14 @@ def _draw_diagram(view: View, rows: list[Row], base: float, factor: float) -> No
     view.sheet.line(face, stroke=palette.ink, width=3)
 
 
-def _draw_arrows(view: View, assessed: Assessed, base: float, factor: float) -> None:
+def _draw_arrows(view: View, assessed: Assessed, span: Row, base: float, factor: float) -> None:
     """Arrows of the pressure, pointing the way it pushes."""
-    face, scale, index = view.reading.face, view.scale, view.reading.index
-    height = face.top - face.bottom
+    scale, index = view.scale, view.reading.index
+    height = span[1] - span[0]
     count = min(_ARROWS, int(height * scale.per_metre / 16))
     diagram = assessed.diagram.take(index)
     for step in range(count):
-        z = face.bottom + height * (step + 0.5) / count
+        z = span[0] + height * (step + 0.5) / count
         reach = float(diagram.pressure(np.array([z]))[0, 0]) * factor
         if abs(reach) >= _LEAST_ARROW:
             y, sign = scale.y(z), math.copysign(1.0, reach)

@@ -15,7 +15,10 @@ from loads.faces import face_of
 from loads.first_limit import FirstLimit
 from loads.panel_checks import Face
 from loads.records.closure import Closure
+from loads.records.i_wall import IWall
 from loads.records.panel import Panel
+from loads.records.wall import Wall
+from loads.wall.assess import head_foot
 from webapp.display import System, barrier_title, elevation, foot_of, show, significant
 from webapp.drawing.stack_shape import StackShape, shape_of
 from webapp.part_words import check_title
@@ -46,7 +49,7 @@ class Reading:
     datum: str
 
     @property
-    def record(self) -> Panel | Closure:
+    def record(self) -> Panel | Closure | Wall | IWall:
         """What stands on the line."""
         return self.barrier.record
 
@@ -61,9 +64,19 @@ class Reading:
         return self.record if isinstance(self.record, Closure) else None
 
     @property
+    def wall(self) -> Wall | IWall | None:
+        """The record of a wall, None for any other barrier."""
+        return self.record if isinstance(self.record, Wall | IWall) else None
+
+    @property
     def foot(self) -> str:
-        """What the bottom of the barrier is called."""
-        return foot_of(self.record.kind)
+        """What head is counted from: the bottom of the barrier, or the ground at a wall."""
+        return head_foot(self.wall)[1] if self.wall else foot_of(self.record.kind)
+
+    @property
+    def foot_level(self) -> float:
+        """Elevation from which head is counted. [m]."""
+        return head_foot(self.wall)[0].value if self.wall else self.face.bottom
 
     @property
     def tops(self) -> list[tuple[str, float]]:
@@ -199,16 +212,16 @@ def _over_what(reading: Reading) -> str:
 def reverse_text(reading: Reading) -> str:
     """What is said of reverse head; empty without it."""
     flood, protected = reading.level("flood"), reading.level("protected")
-    if not protected > max(flood, reading.face.bottom):
+    if not protected > max(flood, reading.foot_level):
         return ""
-    if flood > reading.face.bottom:
+    if flood > reading.foot_level:
         return f"protected side {reading.length(protected - flood)} higher"
-    return f"protected side head {reading.length(protected - reading.face.bottom)}"
+    return f"protected side head {reading.length(protected - reading.foot_level)}"
 
 
 def head_text(reading: Reading) -> str:
     """Head of the flood side over the bottom."""
-    head = reading.level("flood") - reading.face.bottom
+    head = reading.level("flood") - reading.foot_level
     return f"head {reading.length(head)}" if head > 0 else "no water on the flood side"
 
 

@@ -18,6 +18,7 @@ from webapp.drawing.pressure import draw_pressure, load_texts
 from webapp.drawing.reading import Reading
 from webapp.drawing.section_layout import lay_out_section
 from webapp.drawing.sheet import Sheet
+from webapp.drawing.wall import wall_drawing
 
 WIDE = Format(
     width=1080, axis=56, plot=330, least_plot=170, section=(252, 700), margin=150, pad=(44, 100), size=13
@@ -65,6 +66,8 @@ def barrier_drawing(
     said = facts(barrier, index=index, system=system, datum=datum)
     kind = f"barrier {'narrow' if narrow else 'wide'} {index}"
     sheet = Sheet(palette, f"{reading.title} in section and net pressure", said, kind)
+    if reading.wall:
+        return wall_drawing(sheet, reading, reading.wall, narrow=narrow)
     if reading.stack:
         return closure_drawing(sheet, reading, reading.stack, narrow=narrow)
     return _narrow(sheet, reading) if narrow else _wide(sheet, reading)

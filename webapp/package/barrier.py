@@ -7,17 +7,21 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from loads.assessment import Assessed, AssessedClosure, Assessment, Barrier, Withheld
+from loads.assessment import Assessed, AssessedClosure, AssessedWall, Assessment, Barrier, Withheld
 from loads.recheck import FITTED_TOLERANCE, STRAIGHT_TOLERANCE
 from loads.records.closure import Closure
+from loads.records.i_wall import IWall
+from loads.records.wall import Wall
+from loads.wall.recheck import TOLERANCE as WALL_TOLERANCE
 from loads.worked_step import Step, Term
 from loads.working import working
-from webapp.display import PRINT_DIGITS, System, barrier_title, elevation
+from webapp.display import PRINT_DIGITS, System, barrier_title, elevation, load_kind
 from webapp.package.closure import ClosureView, closure_checks, closure_view
 from webapp.package.drawings import Drawing, section_drawing
 from webapp.package.grid import Grid, Heading, grid_of, words
 from webapp.package.states import State
 from webapp.package.tables import RESULT_DIGITS, checks_grid, level_rows, states_grid
+from webapp.package.wall import wall_facts
 from webapp.step_text import figure, line_text, tiny, unit_of, with_unit
 
 DISAGREEMENT_DIGITS = 10
@@ -85,7 +89,8 @@ class WithheldView:
 def withheld_view(barrier: Withheld, system: System, datum: str) -> WithheldView:
     """Text of a withheld barrier."""
     foot = foot_of(barrier)
-    names = (("horizontal force H", "force"), (f"moment about the {foot} M", "moment"))
+    force, moment = (load_kind(barrier.record.kind, kind) for kind in ("force", "moment"))
+    names = (("horizontal force H", force), (f"moment about the {foot} M", moment))
     if barrier.subject:
         names = ((f"{barrier.subject}, force", "force"), (f"{barrier.subject}, moment", "moment"))
     rows = tuple(
@@ -134,7 +139,9 @@ def barrier_view(barrier: Assessed, many: Assessment, states: list[State], datum
         title=barrier_title(record.id, record.name),
         verdict=barrier.verdict(),
         note=record.note,
-        facts=_facts(barrier, system, datum),
+        facts=wall_facts(barrier, system, datum)
+        if isinstance(barrier, AssessedWall)
+        else _facts(barrier, system, datum),
         drawing=section_drawing(barrier, system, datum),
         remarks=barrier.remarks,
         checks=checks,
@@ -143,9 +150,15 @@ def barrier_view(barrier: Assessed, many: Assessment, states: list[State], datum
         loads=_by_load(barrier, system),
         steps=tuple(step_view(step, system, datum) for step in working(barrier)),
         second=_second(barrier, system),
-        tolerance=tiny(FITTED_TOLERANCE if fitted(barrier) else STRAIGHT_TOLERANCE),
+        tolerance=tiny(_tolerance(barrier)),
         closure=closure,
     )
+
+
+def _tolerance(barrier: Assessed) -> float:
+    if isinstance(barrier, AssessedWall):
+        return WALL_TOLERANCE
+    return FITTED_TOLERANCE if fitted(barrier) else STRAIGHT_TOLERANCE
 
 
 def fitted(barrier: Assessed) -> bool:
@@ -155,7 +168,12 @@ def fitted(barrier: Assessed) -> bool:
 
 def foot_of(barrier: Barrier) -> str:
     """What moments of a barrier are about."""
-    return "sill" if isinstance(barrier.record, Closure) else "bottom edge"
+    record = barrier.record
+    if isinstance(record, IWall):
+        return "protected-side ground"
+    if isinstance(record, Wall):
+        return "toe"
+    return "sill" if isinstance(record, Closure) else "bottom edge"
 
 
 def _facts(barrier: Assessed, system: System, datum: str) -> tuple[tuple[str, str], ...]:
@@ -188,20 +206,21 @@ def _clean(value: float, scale: float) -> float:
 
 
 def _by_load(barrier: Assessed, system: System) -> Grid:
+    force, moment = (load_kind(barrier.record.kind, kind) for kind in ("force", "moment"))
     headings = (
         words("load"),
-        Heading(text="H", unit=unit_of("force", system)),
-        Heading(text="V", unit=unit_of("force", system)),
-        Heading(text="M", unit=unit_of("moment", system)),
+        Heading(text="H", unit=unit_of(force, system)),
+        Heading(text="V", unit=unit_of(force, system)),
+        Heading(text="M", unit=unit_of(moment, system)),
     )
     scale = _scale(barrier)
     parts = [*barrier.by_load.items(), ("all together", barrier.resultant)]
     rows = tuple(
         (
             name,
-            figure(_clean(float(part.horizontal[0]), scale), "force", system, RESULT_DIGITS),
-            figure(_clean(float(part.vertical[0]), scale), "force", system, RESULT_DIGITS),
-            figure(_clean(float(part.moment[0]), scale), "moment", system, RESULT_DIGITS),
+            figure(_clean(float(part.horizontal[0]), scale), force, system, RESULT_DIGITS),
+            figure(_clean(float(part.vertical[0]), scale), force, system, RESULT_DIGITS),
+            figure(_clean(float(part.moment[0]), scale), moment, system, RESULT_DIGITS),
         )
         for name, part in parts
     )
@@ -219,10 +238,11 @@ def _second_headings() -> tuple[Heading, ...]:
 
 def _second(barrier: Assessed, system: System) -> Grid:
     first, second, scale = barrier.resultant, barrier.recheck, _scale(barrier)
+    force, moment = (load_kind(barrier.record.kind, kind) for kind in ("force", "moment"))
     quantities = (
-        ("horizontal force H", "force", first.horizontal, second.horizontal),
-        ("vertical force V", "force", first.vertical, second.vertical),
-        (f"moment about the {foot_of(barrier)} M", "moment", first.moment, second.moment),
+        ("horizontal force H", force, first.horizontal, second.horizontal),
+        ("vertical force V", force, first.vertical, second.vertical),
+        (f"moment about the {foot_of(barrier)} M", moment, first.moment, second.moment),
     )
     rows = tuple(
         _pair(name, kind, (_clean(float(one[0]), scale), _clean(float(other[0]), scale)), system)

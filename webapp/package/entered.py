@@ -13,7 +13,7 @@ from webapp.display import barrier_title, show
 
 NO_SOURCE = "no source stated"
 _ON_COVER = ("format", "title", "location", "purpose", "author", "revision", "status")
-_HELD_APART = ("water", "panel", "closure")
+_HELD_APART = ("water", "panel", "closure", "wall", "i_wall")
 
 
 @dataclass(frozen=True, kw_only=True)

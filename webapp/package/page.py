@@ -18,7 +18,7 @@ from loads.method import METHODS
 from loads.records.scenario import Scenario, zone_name
 from loads.references import REFERENCES
 from loads.scenario_file import Document, write_document
-from webapp.display import System, barrier_title, elevation, pedigree
+from webapp.display import System, barrier_title, elevation, load_kind, pedigree
 from webapp.package.barrier import (
     BarrierView,
     WithheldView,
@@ -196,8 +196,8 @@ def _summary_row(barrier: Barrier, system: System) -> tuple[str, ...]:
         name,
         _bare(face.bottom, system),
         _bare(face.top, system),
-        figure(float(found.horizontal[0]), "force", system, RESULT_DIGITS),
-        figure(float(found.moment[0]), "moment", system, RESULT_DIGITS),
+        _load_cell(float(found.horizontal[0]), record.kind, "force", system),
+        _load_cell(float(found.moment[0]), record.kind, "moment", system),
         _bare(float(found.line_of_action[0]), system),
         ratio_text(float(check.ratio[0]), check.kind) if check else "–",
         check_title(check, record.kind) if check else "–",
@@ -205,6 +205,14 @@ def _summary_row(barrier: Barrier, system: System) -> tuple[str, ...]:
         "–" if first is None else _bare(first, system),
         barrier.verdict(),
     )
+
+
+def _load_cell(value: float, barrier: str, kind: str, system: System) -> str:
+    """Force or moment; that of a wall with its unit, which is per length and not that of the heading."""
+    shown = load_kind(barrier, kind)
+    if shown == kind:
+        return figure(value, kind, system, RESULT_DIGITS)
+    return with_unit(value, shown, system, RESULT_DIGITS)
 
 
 def _bare(level: float, system: System) -> str:

@@ -9,9 +9,10 @@ import numpy as np
 from loads.arrays import FloatArray
 from loads.assessment import Assessed, Assessment, Withheld
 from loads.checks import Check
-from webapp.display import NO_BREAK, System, elevation, pedigree, significant
+from webapp.display import NO_BREAK, System, elevation, load_kind, pedigree, significant
 from webapp.package.grid import Grid, Heading, words
 from webapp.package.states import State
+from webapp.part_words import check_title
 from webapp.step_text import figure, percent, unit_of, with_unit
 
 RESULT_DIGITS = 4
@@ -25,11 +26,13 @@ def checks_grid(barrier: Assessed, system: System, datum: str) -> Grid:
         Heading(text=text, words=text not in ("demand", "limit", "ratio"))
         for text in ("check", "demand", "limit", "ratio", "verdict", "source of the limit", "remarks")
     )
-    return Grid(headings=headings, rows=tuple(check_cells(check, system, datum) for check in barrier.checks))
+    kind = barrier.record.kind
+    rows = tuple(check_cells(check, system, datum, kind) for check in barrier.checks)
+    return Grid(headings=headings, rows=rows)
 
 
-def check_cells(check: Check, system: System, datum: str) -> tuple[str, ...]:
-    """Name, demand, limit, ratio, verdict, source and remarks of a check."""
+def check_cells(check: Check, system: System, datum: str, kind: str = "") -> tuple[str, ...]:
+    """Name, with its part where a kind is given, demand, limit, ratio, verdict, source and remarks."""
     demand = float(check.demand[0])
     if check.kind == "elevation":
         shown = f"water at {elevation(demand, system, datum)}"
@@ -42,7 +45,7 @@ def check_cells(check: Check, system: System, datum: str) -> tuple[str, ...]:
         limit = with_unit(check.limit_value, kind, system, RESULT_DIGITS)
     ratio = float(check.ratio[0])
     return (
-        check.name,
+        check_title(check, kind) if kind else check.name,
         shown,
         limit if check.limit is not None else "none entered",
         ratio_text(ratio, check.kind),
@@ -96,14 +99,15 @@ def _first_limit(barrier: Assessed, system: System, datum: str) -> tuple[str, st
 def states_grid(many: Assessment, barrier_id: str, states: list[State], system: System, datum: str) -> Grid:
     """Force, moment and verdict in every state."""
     barrier = many.barrier(barrier_id)
+    kinds = [load_kind(barrier.record.kind, kind) for kind in ("force", "moment")]
     level = f"{unit_of('elevation', system)} {datum}"
     headings = (
         words("state"),
         Heading(text="flood side", unit=level),
         Heading(text="protected side", unit=level),
-        Heading(text="H", unit=unit_of("force", system)),
+        Heading(text="H", unit=unit_of(kinds[0], system)),
         Heading(text="change of H"),
-        Heading(text="M", unit=unit_of("moment", system)),
+        Heading(text="M", unit=unit_of(kinds[1], system)),
         Heading(text="change of M"),
         Heading(text="largest ratio"),
         words("verdict"),
@@ -120,9 +124,9 @@ def states_grid(many: Assessment, barrier_id: str, states: list[State], system: 
             (
                 state.name,
                 *sides,
-                figure(float(force[i]), "force", system, RESULT_DIGITS),
+                figure(float(force[i]), kinds[0], system, RESULT_DIGITS),
                 _change(force, i),
-                figure(float(moment[i]), "moment", system, RESULT_DIGITS),
+                figure(float(moment[i]), kinds[1], system, RESULT_DIGITS),
                 _change(moment, i),
                 "–"
                 if column is None

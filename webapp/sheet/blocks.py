@@ -15,7 +15,7 @@ _TIMES = 9.8
 _TITLES = {"large": 2.0, "middle": 1.42, "small": 1.1}
 _BOLD = 1.05
 _CODE_ROOM = "AB12-C3 · version ________ · sheet 1 of 1"
-_TICK, _TICK_HEAD = 1.36, 1.1
+_TICK, _TICK_HEAD = 1.3, 1.1
 _ALARM = 1.3
 _GUTTER = 4.0
 _CAUTION = 0.97
@@ -47,7 +47,11 @@ def blocks(parts: Parts) -> list[Block]:
         *(Block(texts=tuple(texts), width=column) for texts in wide),
         _tick_block(parts, width),
         Block(texts=(parts["caution"],), width=width, scale=_CAUTION),
-        Block(texts=("stamp", *([parts["notice"]] if parts["notice"] else [])), width=width, scale=_FOOT),
+        Block(
+            texts=(f"{parts['printed']} {parts['notice']} {parts['id']} {_CODE_ROOM}",),
+            width=width,
+            scale=_FOOT,
+        ),
     ]
 
 
@@ -83,7 +87,7 @@ def _box_block(box: Any, width: float) -> Block:
 def _tick_block(parts: Parts, width: float) -> Block:
     rows = max(len(half) for half in parts["ticks"])
     shown = parts["code_picture"] is not None
-    return Block(texts=(), width=width, least=CODE + 5 if shown else 0.0, extra=_TICK_HEAD + rows * _TICK)
+    return Block(texts=(), width=width, least=CODE + 1 if shown else 0.0, extra=_TICK_HEAD + rows * _TICK)
 
 
 def texts_of(parts: Parts) -> list[str]:

@@ -25,7 +25,7 @@ from webapp.sheet.words import (
 
 BLANK = "_" * 10
 TIME_BLANK = "___ : ___"
-_WHERE_EMS, _NOTE_EMS, _SOURCE_EMS, _DATUM_EMS, _LIFT_EMS, _SHORT_EMS = 44.0, 84.0, 42.0, 26.0, 22.0, 76.0
+_WHERE_EMS, _NOTE_EMS, _SOURCE_EMS, _DATUM_EMS, _LIFT_EMS, _SHORT_EMS = 40.0, 66.0, 24.0, 26.0, 22.0, 76.0
 _MOST_GROUPS = 3
 _MORE = "more in the scenario file"
 
@@ -33,8 +33,9 @@ _MORE = "more in the scenario file"
 def where_lines(scenario: Scenario, closure: Closure) -> list[str]:
     """Place and what was noted of it."""
     place = cut(scenario.location, _WHERE_EMS) or f"Place {BLANK}{BLANK}"
-    note = cut(closure.note, _NOTE_EMS)
-    return [place, note or f"Store, key {BLANK}{BLANK}  Way in if the road floods {BLANK}"]
+    if not closure.note:
+        return [sentence(place), f"Store, key {BLANK}{BLANK}  Way in if the road floods {BLANK}"]
+    return [f"{sentence(place)} {cut(closure.note, _NOTE_EMS)}"]
 
 
 def water_lines(plan: Plan, scenario: Scenario) -> list[str]:

@@ -12,11 +12,11 @@ from dataclasses import dataclass
 
 from webapp.drawing.measure import text_width
 
-SIZES = (13.0, 12.5, 12.0, 11.5, 11.0, 10.5, 10.0, 9.5, 9.0)
+SIZES = (13.0, 12.5, 12.0, 11.5, 11.0, 10.5, 10.0, 9.5, 9.0, 8.5, 8.0)
 """Sizes of type that are tried, the largest first; a sheet of usual length is set in 12 pt or more. [pt]"""
 LINE = 1.16
 """Height of a line over the size of the type."""
-PICTURE = (58.0, 47.0)
+PICTURE = (58.0, 42.0)
 """Width and height of the picture of the stack. [mm]"""
 CODE = 37.0
 """Side of the picture of the link. [mm]"""
@@ -26,9 +26,9 @@ SHEETS = {"letter": (193.9, 265.4), "A4": (188.0, 283.0)}
 """Width and height between the margins. [mm]"""
 
 _MM = 25.4 / 72
-_PAD = 1.9
+_PAD = 1.4
 _USUAL = 0.79
-UNSEEN, SEEN = 2.0, -30.0
+UNSEEN, SEEN = 2.0, -18.0
 """Room kept free where nobody lays the page out before it is printed, and where it is tried. [mm]"""
 
 

@@ -43,9 +43,9 @@ CAUTION = (
     "These figures help planning. They do not say the closure is strong. The O&M manual, local codes and a "
     "licensed engineer decide."
 )
-_TITLE_EMS, _NAME_EMS, _REMARK_EMS, _REVISION_EMS = 52.0, 84.0, 84.0, 14.0
+_TITLE_EMS, _NAME_EMS, _REMARK_EMS, _REVISION_EMS = 52.0, 76.0, 46.0, 14.0
 _HEADINGS = ((22.0, "large"), (36.0, "middle"), (float("inf"), "small"))
-_NOTICE = f"Texts that end in {ELLIPSIS} are cut short; the plan with the code above has them whole."
+_NOTICE = f"texts ending in {ELLIPSIS} are cut short"
 
 
 @cache
@@ -162,9 +162,7 @@ def _every_sheet(scenario: Scenario, closure: Closure, plan: Plan | Withheld, li
         "remove": removal_lines(closure),
         "short": short_text(closure),
         "code_picture": Markup(picture) if picture else None,  # noqa: S704  built from modules only
-        "link_notice": "The link is too long for a picture: open the scenario file."
-        if link and not picture
-        else "",
+        "link_notice": "link too long for a code: open the scenario file" if link and not picture else "",
         "caution": CAUTION,
         "times": TIMES,
     }
@@ -181,7 +179,7 @@ def _computed(plan: Plan, scenario: Scenario, now: dt.datetime | None) -> Parts:
         "limit": [*rated_lines(plan), first_limit_line(plan)],
         "loads": load_table(plan),
         "load_notes": load_notes(plan),
-        "remarks": listed(remarks, _REMARK_EMS, "more on the page of this closure") if remarks else "",
+        "remarks": listed(remarks, _REMARK_EMS, "more on its page") if remarks else "",
     }
 
 
@@ -204,7 +202,7 @@ def _style(parts: Parts) -> Parts:
     notices = [_NOTICE] if any(ELLIPSIS in text for text in texts_of(parts)) else []
     notices += [parts["link_notice"]] if parts["link_notice"] else []
     return {
-        "notice": " ".join(notices),
+        "notice": "; ".join(notices),
         "title_size": next(name for most, name in _HEADINGS if ems <= most),
         "line": LINE,
         "picture_width": PICTURE[0],

@@ -16,8 +16,8 @@ from webapp.part_words import first_words, parts_text
 from webapp.sheet.plan import Plan
 from webapp.sheet.words import above_sill, cut, sentence, source_words, span_text, value_text
 
-_RATED_EMS, _CHECKS_EMS = 44.0, 62.0
-_MOST_CHECKS = 3
+_RATED_EMS, _PARTS_EMS = 44.0, 20.0
+_MOST_CHECKS = 2
 PRESSING: tuple[Verdict, ...] = ("above limit", "near limit")
 """Verdicts whose checks are named."""
 _SAID_ELSEWHERE = (
@@ -115,45 +115,41 @@ def _greatest(values: np.ndarray) -> float:
 
 
 def load_notes(plan: Plan) -> list[str]:
-    """With how many logs the loads were computed, and which checks are most pressing now."""
+    """With how many logs the loads were computed, and which checks are most pressing."""
     layout = plan.layout
     what = "the post that takes most" if len(layout.counts) > 1 else "each guide"
-    notes = [f"For {what}, {span_text(layout.counts)} logs in each bay."]
-    if len(plan.built.levels.flood_side) > 1 and float(plan.built.levels.flood_side[1]) > layout.lowest_top:
-        top = elevation(layout.lowest_top, plan.system)
-        notes.append(f"At the rated level water goes over the logs, top {top}.")
-    notes.append(pressing_text(plan))
-    if len(plan.built.levels.flood_side) > 1 and plan.built.verdict(1) in ("near limit", "above limit"):
+    over = elevation(layout.lowest_top, plan.system)
+    notes = [
+        f"Of {what}, with {span_text(layout.counts)} logs in each bay; above {over} water goes over them.",
+        pressing_text(plan),
+    ]
+    if len(plan.built.levels.flood_side) > 1 and plan.built.verdict(1) in PRESSING:
         notes.append(pressing_text(plan, 1))
     return [" ".join(notes)]
 
 
 def pressing_text(plan: Plan, index: int = 0) -> str:
-    """Checks that are above or near their limits in a state, else the one with the largest ratio."""
+    """Checks with the verdict of the closure in a state when it is pressing, else the largest ratio."""
     checks, when = plan.built.checks, ("Now", "At the rated level")[index]
-    by_verdict: dict[Verdict, dict[str, list[str]]] = defaultdict(lambda: defaultdict(list))
-    for check in checks:
-        by_verdict[check.verdict(index)][check.name].append(check.subject)
-    told = []
-    for verdict in PRESSING:
-        names = by_verdict.get(verdict, {})
+    verdict = plan.built.verdict(index)
+    if verdict in PRESSING:
+        names: dict[str, list[str]] = defaultdict(list)
+        for check in checks:
+            if check.verdict(index) == verdict:
+                names[check.name].append(check.subject)
         texts = [_check_text(name, subjects) for name, subjects in list(names.items())[:_MOST_CHECKS]]
-        if len(names) > _MOST_CHECKS:
-            texts.append(f"{len(names) - _MOST_CHECKS} more")
-        told += [f"{verdict}: {', '.join(texts)}"] if texts else []
-    if told:
-        return sentence(f"{when} {cut('; '.join(told), _CHECKS_EMS)}")
+        texts += [f"{len(names) - _MOST_CHECKS} more"] if len(names) > _MOST_CHECKS else []
+        return sentence(f"{when} {verdict}: {', '.join(texts)}")
     lead = next((check for check in checks if check.verdict() != "not checked"), None)
     if lead is None:
         return f"{when} not checked: no limit was entered."
-    name = cut(_check_text(lead.name, [lead.subject]), _CHECKS_EMS - 20)
     ratio = significant(float(lead.ratio[0]), 3)
-    return sentence(f"{when} below the limits entered; largest ratio {ratio}, {name}")
+    return sentence(f"{when} {ratio} of the limit: {_check_text(lead.name, [lead.subject])}")
 
 
 def _check_text(name: str, subjects: list[str]) -> str:
     parts = [subject for subject in subjects if not subject.startswith("closure ")]
-    return f"{name} of {parts_text(parts)}" if parts else name
+    return f"{name} of {cut(parts_text(parts), _PARTS_EMS)}" if parts else name
 
 
 def remark_texts(plan: Plan) -> list[str]:

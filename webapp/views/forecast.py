@@ -1,7 +1,7 @@
 import streamlit as st
 
 from loads.assessment import assess
-from webapp import forecast_figures, forecast_markup, forecast_parts, markup, parts, state
+from webapp import clock_parts, forecast_figures, forecast_markup, forecast_parts, markup, parts, state
 from webapp.answer_clock import zone_of
 
 system = parts.system()
@@ -45,3 +45,4 @@ if line is not None:
     forecast_parts.series_form(scenario)
     if news.forecast.issues:
         forecast_parts.forget_button(gauge)
+clock_parts.clock_forms(st.session_state["document"], st.session_state["revision"])

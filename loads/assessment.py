@@ -99,7 +99,7 @@ def assess(scenario: Scenario, levels: Levels | None = None) -> Assessment:
         try:
             barriers.append(ROUTES[type(record)](record, site))
         except OutsideFormulaError as error:
-            path = f"{record.kind}[{record.id}].sediment"
+            path = f"{record.kind}[{record.id}]" + (".sediment" if getattr(record, "sediment", ()) else "")
             problems.append(Problem(path=path, value="", rule=f"cannot be computed: {error}"))
     if problems:
         raise ScenarioError(problems)

@@ -222,7 +222,7 @@ def _transfer(way: Conversion) -> list[Given | Computed]:
         )
     else:
         difference = _sloped(transfer, f"{meaning}, slope × distance")
-    return [difference, *_off_by(transfer.uncertainty, source)]
+    return [difference, *_off_by(transfer)]
 
 
 def _sloped(transfer: Transfer, meaning: str) -> Given:
@@ -246,7 +246,8 @@ def _sloped(transfer: Transfer, meaning: str) -> Given:
     )
 
 
-def _off_by(uncertainty: Quantity | None, source: str) -> list[Given | Computed]:
+def _off_by(transfer: Transfer) -> list[Given | Computed]:
+    uncertainty = transfer.uncertainty
     if uncertainty is None or uncertainty.value == 0:
         return []
     return [
@@ -258,7 +259,8 @@ def _off_by(uncertainty: Quantity | None, source: str) -> list[Given | Computed]
             value=np.array(0.0),
             low=np.array(-uncertainty.value),
             high=np.array(uncertainty.value),
-            source=source,
+            source=transfer.source,
+            dated=transfer.date,
             text=f"± {uncertainty.text}",
         )
     ]

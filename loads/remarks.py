@@ -93,7 +93,7 @@ def _rated_level_remarks(setting: Setting) -> list[str]:
     if rated.dated is None or not rated.source:
         remarks.append("The rated level has no date or no author: ask who set it and when.")
     if rated.value < setting.panel.bottom.value:
-        remarks.append("The rated level lies below the bottom of the panel: check the datum.")
+        remarks.append("The rated level lies below the bottom: check the datum.")
     return remarks
 
 

@@ -72,6 +72,7 @@ def calculator(expression: str, system: System) -> Callable[..., float]:
         expression = expression.replace(f"#{NO_BREAK}{unit}", "#")
     expression = re.sub(r"(sin|cos) #°", r"\1(radians(#))", expression)
     expression = expression.replace("√#", "sqrt(#)").replace("√", "sqrt").replace("[", "(").replace("]", ")")
+    expression = expression.replace("π", repr(math.pi))
     expression = expression.replace("×", "*").replace("·", "*").replace(MINUS, "-").replace("^", "**")
     for mark, power in _SUPERSCRIPTS.items():
         expression = expression.replace(mark, power)

@@ -61,13 +61,23 @@ def term_text(term: ChainTerm, index: int, states: int, system: System) -> str:
     return f"{term.sign} {term.link.name} {length(float(values[index]), system)}".strip()
 
 
+def range_text(term: ChainTerm, index: int, states: int, system: System) -> str:
+    """Range of one term in one state; empty where none was stated."""
+    low, high = (
+        float(np.broadcast_to(np.asarray(end, dtype=np.float64), (states,))[index])
+        for end in (term.link.low, term.link.high)
+    )
+    return f"{length(low, system)} to {length(high, system)}" if low < high else ""
+
+
 def chain_text(one: BarrierNews, system: System, state: str = "crest, likely") -> str:
     """The whole chain of a barrier on one line, for one state."""
     if one.chain is None:
         return "there is neither a reading nor a forecast at its gauge"
     index = one.states.index(state) if state in one.states else 0
     terms = [term_text(term, index, len(one.states), system) for term in one.chain.terms]
-    return " ".join(terms)
+    head = range_text(one.chain.terms[-1], index, len(one.states), system)
+    return " ".join(terms) + (f" ({head})" if head else "")
 
 
 def earlier_text(one: BarrierNews) -> str:

@@ -26,6 +26,7 @@ _STYLE = {
 }
 _ABOVE = (VERMILLION, "dashdot", 1.5)
 _HEIGHT, _MARGINS, _LABEL_HEIGHT = 460, 100, 15
+_PLOT_ON_A_PHONE = 250
 _LEVELS = {
     "sill": ("#1d2733", "solid"),
     "rated level": (GREEN, "longdash"),
@@ -135,7 +136,7 @@ def _now_line(line: LineClock, zone: ZoneInfo) -> dict[str, Any]:
 
 def _labels(names: Sequence[str], heights: Sequence[float], low: float, high: float) -> list[dict[str, Any]]:
     """Labels beside the lines, moved apart where they would lie on one another."""
-    least = (high - low) * _LABEL_HEIGHT / (_HEIGHT - _MARGINS)
+    least = (high - low) * _LABEL_HEIGHT / _PLOT_ON_A_PHONE
     placed: list[float] = []
     for height in heights:
         placed.append(max(height, placed[-1] + least) if placed else height)

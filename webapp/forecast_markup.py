@@ -20,9 +20,10 @@ from webapp.clock_words import (
     instant_text,
     length,
     plan_lines,
+    range_text,
     term_text,
 )
-from webapp.display import System, barrier_title
+from webapp.display import NO_BREAK, System, barrier_title
 from webapp.markup import escaped, subheading, table
 
 OFF = "Advice is off. The arithmetic goes on: every time below is only worked out from what was entered."
@@ -68,6 +69,7 @@ def _cell(timeline: Timeline, name: str, zone: ZoneInfo) -> str:
     if instant is None or instant.moment is None:
         return f"<small>{escaped(words)}</small>"
     clock, abbreviation, day = words.split(" ", 2)
+    day = day.replace(" ", NO_BREAK, 3).replace(f",{NO_BREAK}", ", ")
     return f"<b>{escaped(clock)}&nbsp;{escaped(abbreviation)}</b> <small>{escaped(day)}</small>"
 
 
@@ -134,7 +136,10 @@ def _term(term: ChainTerm, index: int, states: int, system: System) -> str:
     day = f", {link.dated.isoformat()}" if link.dated else ""
     source = f"{link.source}{day}" if link.source else ""
     mark = f'<em class="sh-mark">{escaped(term.mark)}</em>' if term.mark else ""
-    return f'<span class="sh-term"><span>{words}</span><small>{escaped(source)}</small>{mark}</span>'
+    about = [text for text in (range_text(term, index, states, system), source) if text]
+    return (
+        f'<span class="sh-term"><span>{words}</span><small>{escaped("; ".join(about))}</small>{mark}</span>'
+    )
 
 
 def limits_table(line: LineClock, zone: ZoneInfo, system: System) -> str:

@@ -36,7 +36,7 @@ def check_table(checks: Sequence[Check], system: System, more: str, kind: str) -
             limit_cell(check, system),
             ratio_cell(check, 0),
             ratio_cell(check, 1),
-            escaped(" ".join((check.source, *check.remarks))),
+            f'<div class="sh-source">{escaped(" ".join((check.source, *check.remarks)))}</div>',
         ]
         for check in checks
     ]

@@ -198,7 +198,9 @@ def ratio_cell(check: Check, index: int) -> str:
     if check.limit is None:
         return ""
     ratio = float(check.ratio[index])
-    return significant(ratio, 3) if math.isfinite(ratio) else "none allowed"
+    if math.isfinite(ratio):
+        return significant(ratio, 3)
+    return "beyond any limit" if check.kind != "elevation" and check.limit_value else "none allowed"
 
 
 def ratio_words(check: Check) -> str:

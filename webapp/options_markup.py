@@ -9,12 +9,13 @@ from typing import Any
 
 import numpy as np
 
+from loads.checks import Check
 from loads.records.wall import Wall
 from loads.units import from_si
 from loads.wall.criteria import CriteriaSet
 from loads.wall.options import OptionGrid
 from webapp.display import NO_BREAK, System, show, significant
-from webapp.markup import escaped, ratio_cell, subheading, table, verdict_mark
+from webapp.markup import escaped, subheading, table, verdict_mark
 from webapp.options_candidate import Candidate, limits_elsewhere
 from webapp.options_figures import counts
 from webapp.options_ranges import Range, dimension_names, label, value_of
@@ -98,7 +99,7 @@ def candidate_part(title: str, candidate: Candidate, system: System) -> str:
         [
             escaped(check_name(check.subject, check.name)),
             verdict_mark(check.verdict()),
-            ratio_cell(check, 0),
+            _ratio(check),
             escaped(show(float(check.demand[0]), check.kind, system)),
             escaped(check.limit.text) if check.limit else "",
             escaped(_set_by(check.source, candidate.criteria)),
@@ -132,7 +133,16 @@ def governs(candidate: Candidate) -> str:
     if not candidate.held:
         return "no limit entered"
     check = candidate.held[0]
-    return f"{check_name(check.subject, check.name)} governs, {ratio_cell(check, 0)} of its limit"
+    name, ratio = check_name(check.subject, check.name), float(check.ratio[0])
+    share = f"{significant(ratio, 3)} of its limit" if np.isfinite(ratio) else "no figure below its limit"
+    return f"{name} governs, {share}"
+
+
+def _ratio(check: Check) -> str:
+    if check.limit is None:
+        return ""
+    ratio = float(check.ratio[0])
+    return significant(ratio, 3) if np.isfinite(ratio) else "no figure"
 
 
 def beside_table(candidates: Sequence[Candidate], system: System) -> str:
@@ -152,7 +162,7 @@ def beside_table(candidates: Sequence[Candidate], system: System) -> str:
     rows.append(["verdict", *(verdict_mark(one.verdict) for one in candidates)])
     rows.append(["governs", *(escaped(governs(one)) for one in candidates)])
     held = [
-        {check_name(c.subject, c.name): ratio_cell(c, 0) if c.limit else "not checked" for c in one.checks}
+        {check_name(c.subject, c.name): _ratio(c) if c.limit else "not checked" for c in one.checks}
         for one in candidates
     ]
     for name in dict.fromkeys(name for checks in held for name in checks):

@@ -181,9 +181,6 @@ def states_table(barrier: AssessedWall, labels: Sequence[str], system: System) -
     rows = []
     for i, label in enumerate(labels):
         check = pressing(barrier.checks, i)
-        figures = (
-            _sheet_cells(found, i, system) if isinstance(found, IWallResult) else _cells(found, i, system)
-        )
         rows.append(
             [
                 escaped(label),
@@ -195,9 +192,6 @@ def states_table(barrier: AssessedWall, labels: Sequence[str], system: System) -
                 verdict_mark(barrier.verdict(i)),
             ]
         )
-    own = (
-        ("force", "embedment needed") if sheet else ("sliding factor", "resultant from the toe", "compressed")
-    )
     headings = ("state", "flood side", "protected side", *own, "governs", "of limit", "verdict")
     count = len(own)
     return table(headings, rows, numeric={1, 2, *range(3, 3 + count), 4 + count})

@@ -24,7 +24,10 @@ _clear = small_size("Clear width between guides", "8 ft")
 
 
 class Closure(Record):
-    """Bays of logs on one sill, between abutments and removable posts."""
+    """Bays of logs on one sill, between abutments and removable posts.
+
+    Bays are counted from the left and logs from the sill up, as a crew sees them from the protected side.
+    """
 
     kind: ClassVar[str] = "closure"
 

@@ -66,8 +66,8 @@ class Seal(Record):
     def _rate_has_a_head(self) -> Seal:
         rules = {
             "at_head": "is missing; a rate of leakage needs the head it was stated for",
-            "exponent": "is missing; a rate of leakage needs the power of the head by which it grows: 0.5 for "
-            "an opening, 1 for a slow seep",
+            "exponent": "is missing; a rate of leakage needs the power of the head by which it grows: 0.5 "
+            "for an opening, 1 for a slow seep",
         }
         problems = [
             (name, "", rule)

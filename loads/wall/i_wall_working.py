@@ -126,12 +126,11 @@ def _seepage(result: IWallResult, index: int) -> Step:
             label="exit gradient",
         ),
         line(
-            "γ′/γ_w = {}; factor {}/{} = {}",
-            (float(result.critical_gradient[index]), "ratio"),
+            "F = i_c/i_e = (γ′/γ_w)/i_e = {}/{} = {}",
             (float(result.critical_gradient[index]), "ratio"),
             (float(result.exit_gradient[index]), "ratio"),
             (float(result.critical_gradient[index] / result.exit_gradient[index]), "ratio"),
-            label="critical gradient",
+            label="factor on the critical gradient",
         ),
         line(
             "C = ΣL_v/ΔH = ({} + {})/{} = {}",

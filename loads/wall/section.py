@@ -193,8 +193,7 @@ def slab_section(dimensions: Mapping[str, FloatArray], unit_weight: float) -> Se
     d = dimensions
     low, high, slab = d["base"], d["base"] + d["height"], d["base"] + d["base_thickness"]
     heel, stem = d["heel"], d["stem_width"]
-    width = heel + stem + d["toe"]
-    crest = heel + d["flood_batter"]
+    width, crest = heel + stem + d["toe"], heel + d["flood_batter"]
     key = _key_corners(d, low) if "key_depth" in d else ()
     x, z = _corners(
         (0.0, low),

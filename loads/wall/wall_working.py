@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import numpy as np
 
+from loads.wall.seepage_working import seepage_step
 from loads.wall.sliding import DEFINITION, SlidingBand
 from loads.wall.wall_result import WallResult
 from loads.worked_step import Line, Step, Table, column_sum, line, term
@@ -18,7 +19,7 @@ def wall_working(result: WallResult, index: int = 0) -> tuple[Step, ...]:
         *(_sliding(result, band, index) for band in _bands(result)),
         _ratios(result, index),
         _flotation(result, index),
-        _seepage(result, index),
+        seepage_step(result.seepage, index),
         *_members(result, index),
         _checks(result, index),
     ]
@@ -115,23 +116,22 @@ def _base(result: WallResult, index: int) -> Step:
                 (place, "length"),
             ),
             line("e = B/2 − x = {}/2 − {} = {}", (width, "length"), (place, "length"), (off, "length")),
-            line(
-                "straight line: q = N/B·(1 ± 6e/B) = {} at the toe, {} at the heel",
-                (float(base.linear_toe[index]), "pressure"),
-                (float(base.linear_heel[index]), "pressure"),
+            *(
+                line(
+                    f"q = N/B·(1 {sign} 6·e/B) = {{}}/{{}}·(1 {sign} 6·{{}}/{{}}) = {{}}",
+                    (normal, "line load"),
+                    (width, "length"),
+                    (off, "length"),
+                    (width, "length"),
+                    (float(pressure[index]), "pressure"),
+                    label=f"straight line, {end}",
+                )
+                for sign, end, pressure in (("+", "toe", base.linear_toe), ("−", "heel", base.linear_heel))
             ),
         ]
-        if base.compressed[index] < 1 and base.compressed[index] > 0:
-            reach = float(base.compressed[index]) * width
-            lines.append(
-                line(
-                    "without tension: b = 3·min(x, B − x) = {}, q = 2N/b = 2·{}/{} = {}",
-                    (reach, "length"),
-                    (normal, "line load"),
-                    (reach, "length"),
-                    (float(base.peak[index]), "pressure"),
-                )
-            )
+        reach = float(base.compressed[index]) * width
+        if 0 < reach < width:
+            lines += _without_tension(normal, reach, float(base.peak[index]))
     return Step(
         title="Resultant and pressure on the base",
         formula="N = −ΣV; the resultant acts x from the toe; the base bears no tension",
@@ -142,6 +142,16 @@ def _base(result: WallResult, index: int) -> Step:
             term("", "share of the base in compression", float(base.compressed[index]), "ratio"),
         ),
     )
+
+
+def _without_tension(normal: float, reach: float, peak: float) -> list[Line]:
+    label = "without tension"
+    near = (reach / 3, "length"), (reach, "length")
+    press = (normal, "line load"), (reach, "length"), (peak, "pressure")
+    return [
+        line("b = 3·min(x, B − x) = 3·{} = {}", *near, label=label),
+        line("q = 2·N/b = 2·{}/{} = {}", *press, label=label),
+    ]
 
 
 def _sliding(result: WallResult, band: SlidingBand, index: int) -> Step:
@@ -219,34 +229,6 @@ def _flotation(result: WallResult, index: int) -> Step:
             ),
         ),
     )
-
-
-def _seepage(result: WallResult, index: int) -> Step:
-    screen = result.seepage
-    head = float(screen.head[index])
-    if head <= 0:
-        return Step(title="Underseepage screen", formula="no difference of head")
-    lines = [
-        line(
-            "(ΣL_v + ΣL_h/3)/ΔH = ({} + {}/3)/{} = {}",
-            (float(screen.vertical[index]), "length"),
-            (float(screen.horizontal[index]), "length"),
-            (head, "length"),
-            (float(screen.creep_ratio[index]), "ratio"),
-            label="weighted creep ratio",
-        )
-    ]
-    if screen.exit_depth[index] > 0:
-        lines.append(
-            line(
-                "i = ΔH/(π·d·√λ), λ = (1 + √(1 + (b/d)²))/2, b = {}, d = {}: i = {}",
-                (float(screen.floor[index]), "length"),
-                (float(screen.exit_depth[index]), "length"),
-                (float(screen.exit_gradient[index]), "ratio"),
-                label="exit gradient",
-            )
-        )
-    return Step(title="Underseepage screen", formula="uniform deep ground", lines=tuple(lines))
 
 
 def _members(result: WallResult, index: int) -> list[Step]:

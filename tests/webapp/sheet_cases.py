@@ -93,7 +93,7 @@ CROWDED = {
     "long words": _crowded(f"{LONG} "),
     "wide letters": _crowded("W"),
     "wide letters in words": _crowded("WWWW WWWWWWW "),
-    "ideographs": _crowded("洪水"),
+    "cyrillic": _crowded("Щитовой затвор "),
 }
 """Closures that strain a page."""
 

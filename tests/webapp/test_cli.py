@@ -296,3 +296,51 @@ def test_help_names_every_command() -> None:
     for name, command in main.commands.items():
         assert re.search(rf"^  {name} +{re.escape(command.get_short_help_str()[:20])}", told, re.MULTILINE)
     assert computed("--version") == f"sillhead, version {__version__}\n"
+
+
+MILL = next(path for path in SCENARIOS if path.stem == "mill-street")
+
+
+def test_sheet_writes_one_html_file_with_stamp_and_link(tmp_path: Path) -> None:
+    output = tmp_path / "sheet.html"
+    output.write_text("an older one")
+    told = computed(
+        "sheet", MILL, "C-07", "-o", output, "--stamp", "actual", "--link-base", "https://flood.example/"
+    )
+    assert told == f"{output} written\n"
+    html = output.read_text(encoding="utf-8")
+    assert '<p class="stamp">ACTUAL</p>' in html
+    assert '<div class="qr"><svg' in html
+    assert "size: letter;" in html
+    computed("sheet", MILL, "C-07", "-o", output, "--paper", "A4")
+    html = output.read_text(encoding="utf-8")
+    assert '<p class="stamp">DRAFT</p>' in html
+    assert '<div class="qr">' not in html
+    assert "size: A4;" in html
+    assert list(tmp_path.iterdir()) == [output]
+
+
+@pytest.mark.usefixtures("pango")
+def test_sheet_writes_one_page_of_pdf(tmp_path: Path) -> None:
+    output = tmp_path / "sheet.pdf"
+    computed("sheet", MILL, "C-07", "-o", output, "--stamp", "exercise")
+    (page,) = pypdf.PdfReader(output).pages
+    assert "EXERCISE" in page.extract_text()
+
+
+@pytest.mark.parametrize(
+    ("barrier_id", "name", "message"),
+    [
+        ("C-07", "sheet.txt", r"the file \S+sheet\.txt must end in \.pdf or \.html"),
+        ("C-9", "sheet.html", r'there is no barrier "C-9" in this scenario; closures here: C-07, C-08'),
+        ("P-3", "sheet.pdf", r'"P-3" is a panel; field sheets are for closures; closures here: C-07, C-08'),
+    ],
+)
+def test_sheet_says_what_it_cannot_make(tmp_path: Path, barrier_id: str, name: str, message: str) -> None:
+    assert re.fullmatch(message, refused("sheet", MILL, barrier_id, "-o", tmp_path / name))
+    assert list(tmp_path.iterdir()) == []
+
+
+def test_sheet_knows_three_stamps(tmp_path: Path) -> None:
+    said = refused("sheet", MILL, "C-07", "-o", tmp_path / "sheet.html", "--stamp", "final")
+    assert "'final' is not one of 'actual', 'exercise', 'draft'" in said

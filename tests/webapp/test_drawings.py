@@ -34,9 +34,9 @@ from tests.webapp.drawing_cases import (
 )
 from tests.webapp.driving import ROOT
 from webapp.display import PAGE_DIGITS, elevation, fixed, show
+from webapp.drawing.facts import facts, line_facts
 from webapp.drawing.line import line_drawing
 from webapp.drawing.palette import LIGHT, MARKS, PRINT, Palette
-from webapp.drawing.facts import facts, line_facts
 from webapp.drawing.svg import element, number, on_page
 from webapp.pdf import PrintJob, render
 

@@ -115,19 +115,22 @@ def test_figures_are_those_of_the_engine_and_of_the_json(package: Package) -> No
     for barrier, data in zip(assessment.barriers, told["barriers"], strict=True):
         assert isinstance(barrier, Assessed)
         kind = barrier.record.kind
-        foot = {"panel": "bottom edge", "closure": "sill"}[kind]
+        shape = getattr(barrier.record, "shape", "")
+        foot = {"panel": "bottom edge", "closure": "sill", "wall": "toe"}[kind]
+        foot = "protected-side ground" if shape == "I" else foot
+        force, moment = ("line load", "moment per length") if kind == "wall" else ("force", "moment")
         assert package.says(f"{kind.capitalize()} {barrier.record.id} · {barrier.record.name}")
         load = data["load"]
         for name, value, kind in (
-            ("Horizontal force H, toward the protected side", load["horizontal"], "force"),
-            (f"Moment M about the {foot}", load["moment"], "moment"),
+            ("Horizontal force H, toward the protected side", load["horizontal"], force),
+            (f"Moment M about the {foot}", load["moment"], moment),
         ):
             assert package.says(f"{name} {with_unit(value, kind, system, RESULT_DIGITS)}")
         acts, datum = load["line_of_action"], assessment.scenario.datum
         height = "none, the force is nil" if acts is None else elevation(acts, system, datum)
         assert package.says(f"Line of action of H {height}")
-        printed = figure(load["horizontal"], "force", system, RESULT_DIGITS)
-        assert number_of(printed) == pytest.approx(in_unit(load["horizontal"], "force", system), rel=5e-4)
+        printed = figure(load["horizontal"], force, system, RESULT_DIGITS)
+        assert number_of(printed) == pytest.approx(in_unit(load["horizontal"], force, system), rel=5e-4)
         for step in working(barrier):
             for line in step.lines:
                 assert package.says(line_text(line, system).replace("_", ""))

@@ -21,6 +21,7 @@ from loads.document import check_code, input_digest
 from loads.load import Load, Setting, sediment_loads, water_loads
 from loads.scenario_file import Document, read_file, scenario_of
 from tests.lines import SCENARIOS
+from tests.webapp import test_apptest as pages
 from tests.webapp.sheet_cases import BARE, CROWDED, LONG, PLAIN, changed
 from tests.webapp.test_package import FORBIDDEN, plain
 from webapp.links import decode_document
@@ -139,7 +140,7 @@ def test_every_field_is_on_it() -> None:
         "2 posts, 2 braces, bolts of each post: 2 in tension and 4 in shear",
         "Log 62 lb, 2 people, 31.0 lb each (limit 51 lb).",
         "Crew 4, lift: forklift, 3 min a log.",
-        "Logs CAN be added from the protected side. Last chance: below 439.90 ft.",
+        "Logs CAN be added from the protected side, last chance 439.90 ft.",
         "Rated level 443.40 ft, 6.00 ft (6 ft 0 in) above sill; engineer of record, 2 Mar 2030.",
         "water at 442.40 ft",
         "Not before the river is at",
@@ -190,9 +191,9 @@ def test_logs_that_are_not_there_or_can_not_be_added_are_called_out() -> None:
     assert '<span class="alarm">reached: call now</span>' in short
     stuck = html_of(changed({"logs_in_place": 4}, water={"flood_side": "440.00 ft"}))
     assert '<span class="alarm">4 stand, none can be added</span>' in stuck
-    assert "The water is past it." in stuck
+    assert "Water is past it." in stuck
     closed = html_of(changed({"adding": {"with_water": False}}))
-    assert "Logs CANNOT be added once water is at the sill. Last chance: below 437.40" in closed
+    assert "Logs CANNOT be added with water at the sill, last chance 437.40" in closed
     assert "Do not count on it." in html_of(changed({"adding": None}))
 
 
@@ -464,3 +465,18 @@ def test_logs_to_fit_are_those_of_the_engine() -> None:
         shown = re.search(r'<b class="figure">([\d–]+) of ([\d–]+)</b>', html_of(document, closure_id))
         assert shown
         assert shown[1].split("–") == sorted({str(min(needed)), str(max(needed))}, key=int)
+
+
+def test_the_page_offers_the_sheet_of_the_closure_and_the_stamp_chosen() -> None:
+    street = next(path for path in SCENARIOS if path.stem == "mill-street")
+    test = pages.on(pages.app(read_file(street)), "sheets")
+    names = [getattr(button, "label", "") for button in test.get("download_button")]
+    assert "Field sheet (HTML, opens without a network)" in names
+    assert test.selectbox(key="sheet closure").options == ["C-07 · Mill Street", "C-08 · Mill Lane footpath"]
+    assert test.segmented_control(key="sheet stamp").value == "draft"
+    pages.run(test.segmented_control(key="sheet stamp").set_value("actual"))
+    pages.run(test.selectbox(key="sheet closure").set_value("C-08"))
+    assert test.segmented_control(key="sheet stamp").value == "actual"
+    quay = next(path for path in SCENARIOS if path.stem == "quay-street")
+    without = pages.words(pages.on(pages.app(read_file(quay)), "sheets"))
+    assert "Field sheets are for closures, and this scenario has none." in without

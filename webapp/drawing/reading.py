@@ -186,8 +186,13 @@ def pressing(checks: Checks, index: int) -> Check | None:
 def ratio_text(check: Check, index: int) -> str:
     """Ratio of a check in words."""
     ratio = float(check.ratio[index])
-    nothing = "no head allowed" if check.kind == "elevation" else "none allowed"
+    nothing = "no head allowed" if check.kind == "elevation" else unbounded(check)
     return f"{significant(ratio, RATIO_DIGITS)} of limit" if math.isfinite(ratio) else nothing
+
+
+def unbounded(check: Check) -> str:
+    """What is said of a ratio without bound: of a limit of nothing, or of a demand that nothing carries."""
+    return "none allowed" if check.limit_value == 0 else "beyond any limit"
 
 
 def over_top_texts(reading: Reading) -> list[str]:

@@ -30,7 +30,7 @@ from webapp.package.drawings import flood_line_drawing
 from webapp.package.entered import entry_groups, taken
 from webapp.package.grid import Grid, Heading, words
 from webapp.package.states import levels_of_states, package_states
-from webapp.package.tables import RESULT_DIGITS, bare, largest_ratio, ratio_text
+from webapp.package.tables import RESULT_DIGITS, bare, largest_ratio, ratio_of
 from webapp.part_words import check_title
 from webapp.step_text import figure, unit_of, with_unit
 
@@ -199,7 +199,7 @@ def _summary_row(barrier: Barrier, system: System) -> tuple[str, ...]:
         _load_cell(float(found.horizontal[0]), record.kind, "force", system),
         _load_cell(float(found.moment[0]), record.kind, "moment", system),
         _bare(float(found.line_of_action[0]), system),
-        ratio_text(float(check.ratio[0]), check.kind) if check else "–",
+        ratio_of(check, 0) if check else "–",
         check_title(check, record.kind) if check else "–",
         rated,
         "–" if first is None else _bare(first, system),
@@ -243,7 +243,7 @@ def _governing(many: Assessment, names: list[str]) -> list[str]:
 
 def _ratio_words(barrier: Assessed, column: int, index: int) -> str:
     check, record = barrier.checks[column], barrier.record
-    ratio = ratio_text(float(check.ratio[index]), check.kind)
+    ratio = ratio_of(check, index)
     return f"{ratio}, {record.kind} {record.id}, {check_title(check, record.kind)}"
 
 

@@ -40,19 +40,26 @@ def check_cells(check: Check, system: System, datum: str, kind: str = "") -> tup
         if check.name == "freeboard" and check.limit is not None:
             limit = f"{check.limit.text} to the top: {limit}"
     else:
-        kind = "deflection" if "deflection" in check.name else check.kind
-        shown = with_unit(demand, kind, system, RESULT_DIGITS)
-        limit = with_unit(check.limit_value, kind, system, RESULT_DIGITS)
-    ratio = float(check.ratio[0])
+        own = "deflection" if "deflection" in check.name else check.kind
+        shown = with_unit(demand, own, system, RESULT_DIGITS)
+        limit = with_unit(check.limit_value, own, system, RESULT_DIGITS)
     return (
         check_title(check, kind) if kind else check.name,
         shown,
         limit if check.limit is not None else "none entered",
-        ratio_text(ratio, check.kind),
+        ratio_of(check, 0),
         check.verdict(),
         check.source if check.limit is not None else "–",
         " ".join(check.remarks) or "–",
     )
+
+
+def ratio_of(check: Check, index: int) -> str:
+    """Ratio of a check in one state."""
+    ratio = float(check.ratio[index])
+    if math.isinf(ratio) and check.kind != "elevation" and check.limit_value != 0:
+        return "beyond any limit"
+    return ratio_text(ratio, check.kind)
 
 
 def ratio_text(ratio: float, kind: str = "elevation") -> str:
@@ -128,9 +135,7 @@ def states_grid(many: Assessment, barrier_id: str, states: list[State], system: 
                 _change(force, i),
                 figure(float(moment[i]), kinds[1], system, RESULT_DIGITS),
                 _change(moment, i),
-                "–"
-                if column is None
-                else ratio_text(float(barrier.checks.ratio[i, column]), barrier.checks[column].kind),
+                "–" if column is None else ratio_of(barrier.checks[column], i),
                 barrier.verdict(i),
             )
         )

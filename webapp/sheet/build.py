@@ -25,7 +25,7 @@ from webapp.sheet.words import (
 
 BLANK = "_" * 10
 TIME_BLANK = "___ : ___"
-_WHERE_EMS, _NOTE_EMS, _SOURCE_EMS, _DATUM_EMS, _LIFT_EMS, _SHORT_EMS = 40.0, 66.0, 24.0, 26.0, 22.0, 76.0
+_WHERE_EMS, _NOTE_EMS, _SOURCE_EMS, _DATUM_EMS, _LIFT_EMS, _SHORT_EMS = 40.0, 66.0, 21.0, 26.0, 22.0, 76.0
 _MOST_GROUPS = 3
 _MORE = "more in the scenario file"
 
@@ -177,21 +177,21 @@ def adding_lines(plan: Plan) -> list[tuple[str, bool]]:
         return [("Adding logs with water at the sill: not entered. Do not count on it.", True)]
     if not adding.with_water:
         sill = elevation(plan.sill, system)
-        text = f"Logs CANNOT be added once water is at the sill. Last chance: below {sill}."
+        text = f"Logs CANNOT be added with water at the sill, last chance {sill}."
     else:
         side = "either side" if adding.side == "either" else f"the {adding.side} side"
         if adding.up_to is None:
             return [(f"Logs CAN be added from {side}; up to what level was not entered.", True)]
         last = elevation(adding.up_to.value, system)
-        text = f"Logs CAN be added from {side}. Last chance: below {last}."
-    return [(f"{text} The water is past it." if plan.adding_is_over else text, True)]
+        text = f"Logs CAN be added from {side}, last chance {last}."
+    return [(f"{text} Water is past it." if plan.adding_is_over else text, True)]
 
 
 def removal_lines(closure: Closure) -> list[str]:
     """When and in what order the logs come out."""
     one_way = " The guides or seals bear one way only." if closure.guide.one_way else ""
     when = f"Not before the river is at {BLANK} and falling."
-    return [f"{when} Top log first. Check for mud and water behind.{one_way}"]
+    return [f"{when} Top log first. Look for mud, water behind.{one_way}"]
 
 
 def short_text(closure: Closure) -> str:

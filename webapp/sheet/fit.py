@@ -22,7 +22,7 @@ CODE = 37.0
 """Side of the picture of the link. [mm]"""
 LABEL = 18.0
 """Width of the labels at the left. [mm]"""
-SHEETS = {"letter": (193.9, 265.4), "A4": (188.0, 283.0)}
+SHEETS = {"letter": (193.9, 266.9), "A4": (188.0, 284.5)}
 """Width and height between the margins. [mm]"""
 
 _MM = 25.4 / 72

@@ -157,7 +157,8 @@ def plan_for(assessment: Assessment, closure_id: str) -> Plan | Withheld:
     rated = found.record.rated_level
     levels = np.array([now] if rated is None else [now, rated.value])
     as_built = found.record.model_copy(update={"logs_in_place": standing})
-    one = assessment.scenario.model_copy(update={"panel": (), "closure": (as_built,)})
+    alone = {"panel": (), "wall": (), "i_wall": (), "closure": (as_built,)}
+    one = assessment.scenario.model_copy(update=alone)
     behind = np.full(len(levels), float(found.levels.protected_side[0]))
     built = assess(one, Levels(flood_side=levels, protected_side=behind)).barrier(closure_id)
     if isinstance(built, Withheld):

@@ -24,7 +24,8 @@ st.markdown(
         + markup.remark_list(assessment.barriers)
         + '<div class="sh-note">Force: horizontal, positive toward the protected side. Moment: about the '
         "bottom edge. First limit: the computed flood-side level at which the first entered load limit is "
-        "reached, a screening figure. Rated: the highest water an engineer has put their name to.</div>"
+        "reached, a screening figure. Rated: the highest water an engineer has put their name to. Walls: "
+        "per unit of length, moment about the toe, of an I-wall about the protected-side ground.</div>"
     ),
     unsafe_allow_html=True,
 )

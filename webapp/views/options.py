@@ -9,6 +9,7 @@ options_parts.heading(site)
 parts.level_band()
 base = options_parts.base_choice(document)
 answer = st.container()
+st.markdown(markup.block(markup.subheading("Dimensions and ranges")), unsafe_allow_html=True)
 found = None
 try:
     table = options_parts.base_table(document, base, system)

@@ -33,7 +33,7 @@ def check_answer(check: Check, index: int) -> dict[str, Any]:
     return {
         "subject": check.subject,
         "check": check.name,
-        "demand": float(check.demand[index]),
+        "demand": number(check.demand[index]),
         "limit": number(check.limit_value),
         "unit": "" if kind in PLAIN else SI_UNITS[kind],
         "ratio": number(check.ratio[index]),

@@ -13,7 +13,7 @@ import numpy as np
 from loads.line_clock import LineClock
 from loads.line_watch import GaugeNews
 from loads.moments import utc, zone_abbreviation
-from loads.plan import Plan
+from loads.plan import Plan, PlannedJob
 from loads.series.series import Series
 from webapp.clock_words import length
 from webapp.display import System, in_unit, unit_label
@@ -191,17 +191,7 @@ def plan_figure(line: LineClock, plan: Plan, zone: ZoneInfo) -> dict[str, Any]:
         "textfont": {"color": "#1d2733"},
         "hovertemplate": "%{text}<extra></extra>",
     }
-    water = {
-        "type": "scatter",
-        "mode": "markers+text",
-        "name": "water there",
-        "x": [_local(job.due, line, zone) for job in jobs],
-        "y": [f"crew {job.crew}" for job in jobs],
-        "text": [job.barrier for job in jobs],
-        "textposition": "top center",
-        "marker": {"symbol": "line-ns", "size": 26, "line": {"color": VERMILLION, "width": 3}},
-        "hovertemplate": "water at %{text}<br>%{x|%H:%M %a %e %b}<extra></extra>",
-    }
+    water = _arrivals(jobs, line, zone)
     crews = len({job.crew for job in jobs})
     layout = {
         "height": 150 + 60 * crews,
@@ -213,6 +203,20 @@ def plan_figure(line: LineClock, plan: Plan, zone: ZoneInfo) -> dict[str, Any]:
         "barmode": "overlay",
     }
     return {"data": [bars, water], "layout": layout}
+
+
+def _arrivals(jobs: Sequence[PlannedJob], line: LineClock, zone: ZoneInfo) -> dict[str, Any]:
+    return {
+        "type": "scatter",
+        "mode": "markers+text",
+        "name": "water there",
+        "x": [_local(job.due, line, zone) for job in jobs],
+        "y": [f"crew {job.crew}" for job in jobs],
+        "text": [job.barrier for job in jobs],
+        "textposition": "top center",
+        "marker": {"symbol": "line-ns", "size": 26, "line": {"color": VERMILLION, "width": 3}},
+        "hovertemplate": "water at %{text}<br>%{x|%H:%M %a %e %b}<extra></extra>",
+    }
 
 
 def plan_text(plan: Plan) -> str:

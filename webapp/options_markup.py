@@ -161,15 +161,18 @@ def beside_table(candidates: Sequence[Candidate], system: System) -> str:
     rows.append(["section area", *(escaped(show(one.material, "area", system)) for one in candidates)])
     rows.append(["verdict", *(verdict_mark(one.verdict) for one in candidates)])
     rows.append(["governs", *(escaped(governs(one)) for one in candidates)])
-    held = [
-        {check_name(c.subject, c.name): _ratio(c) if c.limit else "not checked" for c in one.checks}
-        for one in candidates
-    ]
+    held = [{check_name(c.subject, c.name): _ratio(c) for c in one.held} for one in candidates]
     for name in dict.fromkeys(name for checks in held for name in checks):
-        rows.append([f"{escaped(name)}, of limit", *(checks.get(name, "–") for checks in held)])
+        rows.append([f"{escaped(name)}, of limit", *(checks.get(name, "not checked") for checks in held)])
+    rows.append(["no limit entered for", *(escaped(_unheld(one)) for one in candidates)])
     rows.append(["criteria in force", *(escaped(_criteria(one)) for one in candidates)])
     headings = ("", *(f"{number}: {escaped(r.id)}" for number, r in enumerate(records, 1)))
     return table(headings, rows, numeric=set())
+
+
+def _unheld(candidate: Candidate) -> str:
+    names = [check_name(check.subject, check.name) for check in candidate.checks if check.limit is None]
+    return "; ".join(names)
 
 
 def _criteria(candidate: Candidate) -> str:

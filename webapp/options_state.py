@@ -132,7 +132,7 @@ class Options:
     def within(self) -> str:
         """What a candidate that keeps the limits of the grid is called."""
         if limits_elsewhere(self.record):
-            return "within every limit of stability, bearing and seepage entered"
+            return "within every limit that the map holds"
         return "within every limit entered"
 
 

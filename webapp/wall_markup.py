@@ -110,7 +110,15 @@ def wall_part(barrier: AssessedWall, labels: Sequence[str], system: System) -> s
         + states_table(barrier, labels, system)
         + subheading("Forces per unit of length")
         + forces_table(barrier, system)
+        + _action_note(barrier, system)
     )
+
+
+def _action_note(barrier: AssessedWall, system: System) -> str:
+    action = float(barrier.resultant.line_of_action[0])
+    words = f"line of action at {elevation(action, system)}" if math.isfinite(action) else "no line of action"
+    force = show(float(barrier.resultant.horizontal[0]), "line load", system)
+    return f'<div class="sh-note">Horizontal force {force}, {words}.</div>'
 
 
 def forces_table(barrier: AssessedWall, system: System) -> str:

@@ -94,13 +94,13 @@ def test_table_and_json_say_what_a_pocket_calculator_says() -> None:
 @pytest.mark.parametrize("path", SCENARIOS, ids=lambda path: path.stem)
 def test_table_and_json_agree(path: Path) -> None:
     table, answer = computed("check", path), json.loads(computed("check", path, "--json"))
-    factors = {"lb": POUND, "kip": 1e3 * POUND, "kN": 1e3, "N": 1.0}
+    factors = {"lb": POUND, "kip": 1e3 * POUND, "kN": 1e3, "N": 1.0, "lb/ft": POUND / FOOT}
     assert answer["title"] in table
     assert check_code(answer["input_digest"]) in table
     assert answer["version"] == __version__
     for item in answer["barriers"]:
         shown = row(table, item["id"])
-        figures = [cell.split(" ") for cell in shown if re.fullmatch(r"−?[\d .]+ (lb|kip|kN|N)", cell)]
+        figures = [cell.split(" ") for cell in shown if re.fullmatch(r"−?[\d .]+ (lb|kip|kN|N|lb/ft)", cell)]
         (force,) = [float("".join(f[:-1]).replace("−", "-")) * factors[f[-1]] for f in figures]
         assert force == pytest.approx(item["load"]["horizontal"], rel=0.006)
         assert item["verdict"] in shown

@@ -118,7 +118,7 @@ def test_the_least_of_a_block_is_the_figure_by_hand() -> None:
 
 def test_the_least_keeps_the_limits_that_the_map_does_not_hold() -> None:
     options, site = options_of(TEE, TEES, "101 ft")
-    assert options.within == "within every limit of stability, bearing and seepage entered"
+    assert options.within == "within every limit that the map holds"
     inside = [n for n in every(options) if standing(options.grid)[n] == WITHIN]
     kept = [n for n in inside if candidate_of(options.record_of(n), site).within]
     assert 0 < len(kept) < len(inside)

@@ -152,6 +152,8 @@ def test_candidates_of_two_shapes_stand_side_by_side() -> None:
     told = words(test)
     assert "1: W1 2: W3" in told
     assert "shape gravity L" in told
+    assert re.search(r"flotation, of limit not checked [\d.]+", told), "only the second asks for flotation"
+    assert re.search(r"sliding on the base, of limit [\d.]+ [\d.]+", told)
     assert (
         "criteria in force Basis of design, rev 2 (entered); usual Basis of design (entered); usual" in told
     )

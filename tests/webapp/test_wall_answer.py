@@ -11,7 +11,7 @@ from loads.problems import ScenarioError
 from loads.scenario_file import scenario_of
 from loads.states import Levels
 from loads.units import to_si
-from loads.wall import wall_result
+from loads.wall import stability, wall_result
 from tests.webapp.wall_cases import block, i_wall, line, t_wall
 from webapp.answer import answer
 from webapp.text_table import table_text
@@ -21,7 +21,8 @@ ROUNDED = 1e-9
 
 def told(*walls: dict[str, Any], flood: str, **water: str) -> list[dict[str, Any]]:
     document = line(*walls, flood=flood, **water)
-    return list(json.loads(json.dumps(answer(assess(scenario_of(document)), document)))["barriers"])
+    text = json.dumps(answer(assess(scenario_of(document)), document), allow_nan=False)
+    return list(json.loads(text)["barriers"])
 
 
 def plf(value: float) -> float:
@@ -98,6 +99,15 @@ def test_an_i_wall_tells_force_about_the_ground_and_its_embedment() -> None:
     assert embedment["demand"] == pytest.approx(sheet["embedment_required"], rel=ROUNDED)
 
 
+@pytest.mark.parametrize("flood", ["60 ft", "96 ft", "100 ft", "104 ft", "107 ft"])
+def test_no_figure_of_any_wall_is_outside_json(flood: str) -> None:
+    for behind in ({}, {"protected_side": "101 ft"}):
+        walls = told(
+            block(base="92 ft"), t_wall(), i_wall(), i_wall(id="I2", tip="96 ft"), flood=flood, **behind
+        )
+        assert {wall["recheck"]["agrees"] for wall in walls} == {True}
+
+
 def test_the_first_limit_of_an_i_wall_is_where_its_sheet_becomes_too_short() -> None:
     short = i_wall(tip="90 ft")
     (wall,) = told(short, flood="100 ft")
@@ -119,7 +129,7 @@ def test_the_text_table_shows_a_wall_per_length_with_head_above_the_ground() -> 
 
 
 def test_a_wall_whose_computations_disagree_is_withheld(monkeypatch: pytest.MonkeyPatch) -> None:
-    whole = wall_result.stability
+    whole = stability.stability
 
     def broken(*given: Any, **named: Any) -> Any:
         found = whole(*given, **named)

@@ -167,7 +167,7 @@ def _tips(view: View, ground: Ground, wall: IWall) -> None:
             sheet = view.sheet
             sheet.line([(x - 14, y), (x + 10, y)], stroke=sheet.palette.ink, width=1.4, dashes="4 2")
             lift = -6 if name == "balanced" else 8
-            sheet.plated(x + 12, y + lift, words, size=view.size - 2)
+            sheet.plated(x + 12, y + lift, words, size=view.size - 1)
 
 
 def _resultant(view: View, ground: Ground) -> None:

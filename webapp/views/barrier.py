@@ -68,8 +68,7 @@ else:
         + barrier_markup.load_table(barrier, system)
     )
     st.markdown(markup.block(content), unsafe_allow_html=True)
-    upright = not isinstance(barrier, AssessedWall)
-    if upright and st.toggle("Read the pressure at any elevation", key="read off"):
+    if st.toggle("Read the pressure at any elevation", key="read off"):
         figure = figures.pressure_figure(barrier, system)
         st.plotly_chart(figure, alt=figures.pressure_text(barrier, system), config={"displaylogo": False})
     with st.expander("Worked steps", on_change="rerun", key="worked steps") as steps:

@@ -170,7 +170,7 @@ def show(value: float, kind: str, system: System, digits: int = PAGE_DIGITS) -> 
         return _power(value, kind, system, digits)
     choice = CHOICES[system][kind]
     number, label = from_si(value, choice.unit, choice.kind), choice.label
-    if abs(number) >= choice.from_size:
+    if choice.larger and abs(number) >= choice.from_size:
         number, label = from_si(value, choice.larger, choice.kind), choice.larger_label
     joint = "" if label == "°" else NO_BREAK
     return f"{significant(number, digits)}{joint}{label}"
@@ -196,7 +196,7 @@ def show_all(values: Sequence[float], kind: str, system: System, digits: int = P
     choice = CHOICES[system][kind]
     sizes = [abs(from_si(value, choice.unit, choice.kind)) for value in values if math.isfinite(value)]
     unit, label = choice.unit, choice.label
-    if sizes and max(sizes) >= choice.from_size:
+    if choice.larger and sizes and max(sizes) >= choice.from_size:
         unit, label = choice.larger, choice.larger_label
     joint = "" if label == "°" else NO_BREAK
     return [f"{significant(from_si(value, unit, choice.kind), digits)}{joint}{label}" for value in values]

@@ -100,7 +100,7 @@ def candidate_part(title: str, candidate: Candidate, system: System) -> str:
             escaped(check_name(check.subject, check.name)),
             verdict_mark(check.verdict()),
             _ratio(check),
-            escaped(show(float(check.demand[0]), check.kind, system)),
+            escaped(_demand(check, system)),
             escaped(check.limit.text) if check.limit else "",
             escaped(_set_by(check.source, candidate.criteria)),
         ]
@@ -136,6 +136,11 @@ def governs(candidate: Candidate) -> str:
     name, ratio = check_name(check.subject, check.name), float(check.ratio[0])
     share = f"{significant(ratio, 3)} of its limit" if np.isfinite(ratio) else "no figure below its limit"
     return f"{name} governs, {share}"
+
+
+def _demand(check: Check, system: System) -> str:
+    demand = float(check.demand[0])
+    return show(demand, check.kind, system) if np.isfinite(demand) else "–"
 
 
 def _ratio(check: Check) -> str:

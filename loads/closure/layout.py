@@ -152,7 +152,7 @@ class Layout:
 
     @cached_property
     def guides(self) -> tuple[Upright, Upright]:
-        """Guides at the left and at the right abutment, seen from the protected side, where bay 1 is at the left."""
+        """Guides at the left and right abutment, seen from the protected side; bay 1 is at the left."""
         ends = (("left guide", 0, 0.0), ("right guide", -1, self.opening))
         left, right = (
             Upright(

@@ -38,14 +38,15 @@ def words(test: AppTest) -> str:
     return re.sub(r"[\s\u00a0\u202f]+", " ", text)
 
 
-def small(test: AppTest) -> AppTest:
-    """Ranges of a few values, with the block of 8 ft and 4 ft among them."""
+def small(test: AppTest, *ends: str) -> AppTest:
+    """Ranges of a few values, with the block of 8 ft and 4 ft among them when none are given."""
+    base_low, base_high, top_low, top_high = ends or ("6 ft", "8 ft", "1 ft", "4 ft")
     for label, text in (
-        ("Base width, low", "6 ft"),
-        ("Base width, high", "8 ft"),
+        ("Base width, low", base_low),
+        ("Base width, high", base_high),
         ("Base width, count", "3"),
-        ("Top width, low", "1 ft"),
-        ("Top width, high", "4 ft"),
+        ("Top width, low", top_low),
+        ("Top width, high", top_high),
         ("Top width, count", "4"),
     ):
         field(test, label).set_value(text)
@@ -141,6 +142,16 @@ def test_a_start_goes_into_the_scenario_as_another_wall() -> None:
         ("W2", "T", "88 ft"),
     ]
     assert "Wall W2 of the scenario has these dimensions now" in test.success[0].value
+
+
+def test_a_crack_that_runs_through_shows_no_figure_and_stays_above_limit() -> None:
+    slim = {**BLOCK, "top_width": "1 ft", "base_width": "2 ft", "uplift": "linear"}
+    slim["foundation"] = {**BLOCK["foundation"], "allowable_bearing": "3000 psf"}
+    test = small(options_page(slim), "1 ft", "2 ft", "0.5 ft", "1 ft")
+    told = words(test)
+    assert not test.error
+    assert "No candidate of these ranges is within every limit entered" in told
+    assert "base pressure above limit no figure – 3000 psf" in told
 
 
 def test_candidates_of_two_shapes_stand_side_by_side() -> None:

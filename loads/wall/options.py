@@ -139,7 +139,9 @@ def option_grid(
         if progress is not None:
             progress(min(start + BLOCK, total) / total)
     possible, material, ratios = (np.concatenate([block[i] for block in blocks]) for i in range(3))
-    blank = np.where(np.isnan(ratios), -np.inf, ratios)
+    # a check without a figure anywhere has no limit; one that lacks it for a single candidate is not kept
+    limited = ~np.isnan(ratios[possible.astype(bool)]).all(axis=0)
+    blank = np.where(np.isnan(ratios), np.where(limited, np.inf, -np.inf), ratios)
     has = bool(ratios.shape[1])
     worst = blank.max(axis=1) if has else np.full(total, np.nan)
     worst = np.where(possible, worst, np.nan)

@@ -7,7 +7,7 @@ from typing import Literal, TypeAlias
 
 Status: TypeAlias = Literal["published", "common practice, no source", "from memory, to be confirmed"]
 
-_TRANSCRIBED = "worked examples as transcribed in an open companion notebook of the textbook"
+_SEEN_IN = "worked examples as worked in an open companion notebook of the textbook"
 _UNSTATED = "not known"
 
 
@@ -35,5 +35,5 @@ class Reference:
 
 
 def textbook(key: str, title: str, edition: str = _UNSTATED) -> Reference:
-    """Textbook whose worked examples were seen in an open transcription."""
-    return Reference(key=key, citation=f"{title}; {_TRANSCRIBED}", edition=edition)
+    """Textbook whose worked examples were seen in an open companion notebook."""
+    return Reference(key=key, citation=f"{title}; {_SEEN_IN}", edition=edition)

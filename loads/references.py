@@ -196,7 +196,9 @@ _TEXTBOOKS = (
     textbook("Cengel", "Y. A. Çengel and J. M. Cimbala, Fluid Mechanics: Fundamentals and Applications"),
     textbook("DasFoundation", "B. M. Das, Principles of Foundation Engineering"),
     textbook(
-        "DasGeotechnical", "B. M. Das, Principles of Geotechnical Engineering", "7th, by the transcription"
+        "DasGeotechnical",
+        "B. M. Das, Principles of Geotechnical Engineering",
+        "7th, by the companion notebook",
     ),
     textbook("Daugherty", "R. L. Daugherty and J. B. Franzini, Fluid Mechanics"),
     textbook("Dighe", "R. S. Dighe, Hydraulics Made Easy"),
@@ -209,7 +211,9 @@ _TEXTBOOKS = (
     textbook("Sarkar", "B. K. Sarkar, Fluid Mechanics and Hydraulic Machines"),
     textbook("Schaschke", "C. Schaschke, Fluid Mechanics: Worked Examples"),
     textbook(
-        "Subramanya", "K. Subramanya, 1000 Solved Problems in Fluid Mechanics", "2005, by the transcription"
+        "Subramanya",
+        "K. Subramanya, 1000 Solved Problems in Fluid Mechanics",
+        "2005, by the companion notebook",
     ),
 )
 

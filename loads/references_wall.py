@@ -31,7 +31,7 @@ WALLS: Final = (
     Reference(
         key="NAVFACDM7",
         citation="Naval Facilities Engineering Command, DM-7.02, Foundations and Earth Structures, "
-        "chapter 3, table 1; as transcribed in two mirrors",
+        "chapter 3, table 1; as seen in two mirrors",
         edition="September 1986",
     ),
     Reference(

@@ -72,8 +72,8 @@ def base_pressure(normal: FloatArray, moment: FloatArray, width: FloatArray) -> 
     (array([114285.7]), array([0.84]))
     """
     presses = normal > 0
-    safe = np.where(presses, normal, 1.0)
-    place = np.where(presses, -moment / safe, np.nan)
+    divisor = np.where(presses, normal, 1.0)
+    place = np.where(presses, -moment / divisor, np.nan)
     eccentricity = width / 2 - place
     near = np.minimum(place, width - place)
     compressed = np.where(presses, np.clip(3 * near / width, 0.0, 1.0), 0.0)

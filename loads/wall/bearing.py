@@ -35,8 +35,8 @@ def bearing_factors_meyerhof(friction_angle: FloatArray) -> tuple[FloatArray, Fl
     )
     tangent = np.tan(friction_angle)
     depth_factor = np.exp(np.pi * tangent) * np.tan(np.pi / 4 + friction_angle / 2) ** 2
-    safe = np.where(tangent > 0, tangent, 1.0)
-    cohesion_factor = np.where(tangent > 0, (depth_factor - 1) / safe, 2 + np.pi)
+    divisor = np.where(tangent > 0, tangent, 1.0)
+    cohesion_factor = np.where(tangent > 0, (depth_factor - 1) / divisor, 2 + np.pi)
     weight_factor = (depth_factor - 1) * np.tan(1.4 * friction_angle)
     return cohesion_factor, np.asarray(depth_factor), np.asarray(weight_factor)
 
@@ -86,7 +86,7 @@ def bearing_resistance_meyerhof(
     """
     cohesion_factor, depth_factor, weight_factor = bearing_factors_meyerhof(friction_angle)
     lean = np.maximum(1 - inclination / (np.pi / 2), 0.0) ** 2
-    safe = np.where(friction_angle > 0, friction_angle, 1.0)
-    lean_weight = np.where(friction_angle > 0, np.maximum(1 - inclination / safe, 0.0) ** 2, 0.0)
+    divisor = np.where(friction_angle > 0, friction_angle, 1.0)
+    lean_weight = np.where(friction_angle > 0, np.maximum(1 - inclination / divisor, 0.0) ** 2, 0.0)
     surface = (cohesion * cohesion_factor + overburden * depth_factor) * lean
     return np.asarray(surface + unit_weight * width / 2 * weight_factor * lean_weight)

@@ -269,9 +269,9 @@ def _band(face: Face, low: FloatArray, high: FloatArray) -> tuple[FloatArray, Fl
         rise = z[:, i + 1] - z[:, i]
         if not np.any(rise):
             continue
-        safe = np.where(rise != 0, rise, 1.0)
-        start = np.clip((low - z[:, i]) / safe, 0, 1)
-        stop = np.clip((high - z[:, i]) / safe, 0, 1)
+        divisor = np.where(rise != 0, rise, 1.0)
+        start = np.clip((low - z[:, i]) / divisor, 0, 1)
+        stop = np.clip((high - z[:, i]) / divisor, 0, 1)
         slope = x[:, i + 1] - x[:, i]
         a, b = (x[:, i] - end[:, 0] + slope * share for share in (start, stop))
         height = rise * np.abs(stop - start)

@@ -231,9 +231,9 @@ def exit_gradient_floor(head: FloatArray, floor: FloatArray, depth: FloatArray) 
     array([0.1039])
     """
     deep = depth > 0
-    safe = np.where(deep, depth, 1.0)
-    lam = (1 + np.sqrt(1 + (floor / safe) ** 2)) / 2
-    return np.where(head <= 0, 0.0, np.where(deep, head / (np.pi * safe * np.sqrt(lam)), np.inf))
+    divisor = np.where(deep, depth, 1.0)
+    lam = (1 + np.sqrt(1 + (floor / divisor) ** 2)) / 2
+    return np.where(head <= 0, 0.0, np.where(deep, head / (np.pi * divisor * np.sqrt(lam)), np.inf))
 
 
 def exit_gradient_layer(head: FloatArray, depth: FloatArray, layer: FloatArray) -> FloatArray:

@@ -45,7 +45,7 @@ def test_dry_sand(agree: Agree, pressure: str, thrust: str, slack: float) -> Non
     found = behind(
         layer("6 m", "16 kN/m3", pressure, friction_angle="36 deg"), height="6 m", level=DRY
     ).resultant
-    why = "the transcription takes 57.3 degrees to the radian, which is 0.01 %"
+    why = "the companion notebook takes 57.3 degrees to the radian, which is 0.01 %"
     agree(
         found.horizontal / 1e3, printed(thrust), abs=slack, why=why, what=f"{pressure} thrust, kN per metre"
     )
@@ -82,7 +82,7 @@ def test_soil_with_cohesion_and_friction_after_the_crack(agree: Agree) -> None:
     "published; Ex. 7.1, p. 319: φ′ 30° over φ′ 36°, 16 kN/m³, 3 m each, water at 3 "
     "m; the lower layer's saturated "
     "19 kN/m³ is from memory, to be confirmed; the height of the resultant is "
-    "corrected, the transcription's 1.84 m "
+    "corrected, the companion notebook's 1.84 m "
     "takes a third of a triangle's area for a half",
 )
 def test_two_layers_with_water_between(agree: Agree) -> None:

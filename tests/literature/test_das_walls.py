@@ -45,7 +45,7 @@ def test_moment_ratio_of_a_cantilever_wall(agree: Agree) -> None:
     "DasFoundation",
     "published; Ex. 8.3, p. 370: height 17.5 ft, 121 lb/ft³, φ 30°, base 10.3 ft on φ 20° and cohesion "
     "1.0 ksf at two "
-    "thirds; the six weights are not in the transcription: their sum is taken from the printed "
+    "thirds; the six weights are not in the companion notebook: their sum is taken from the printed "
     "pressures and their moment "
     "from the printed ratio",
 )

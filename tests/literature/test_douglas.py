@@ -23,7 +23,7 @@ def test_moment_of_a_trapezoid_about_its_upper_edge(agree: Agree) -> None:
     "Douglas",
     "published; Ex. 3.2, p. 67: mitre gate leaf of 1.8 m, water 5 m and 1.5 m, leaves "
     "at 20°, hinges 0.6 m above "
-    "the sill and 4.8 m apart; geometry inferred from the transcription's constants",
+    "the sill and 4.8 m apart; geometry inferred from the companion notebook's constants",
 )
 def test_hinges_of_a_mitre_gate(agree: Agree) -> None:
     leaf = {"width": "1.8 m", "height": "5 m"}

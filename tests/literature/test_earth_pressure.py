@@ -44,7 +44,7 @@ def test_rankine_thrusts(agree: Agree) -> None:
         weight * passive_coefficient_rankine(degrees(36)),
         printed("1109.2"),
         abs=0.2,
-        why="the transcription takes 57.3 degrees to the radian, which is 0.01 %",
+        why="the companion notebook takes 57.3 degrees to the radian, which is 0.01 %",
         what="passive thrust, kN per metre",
     )
 
@@ -72,7 +72,7 @@ def test_cohesive_soil_under_sloping_ground(agree: Agree) -> None:
         (15 - crack) * foot / 2,
         printed("2339.8"),
         abs=0.1,
-        why="the transcription takes 57.3 degrees to the radian",
+        why="the companion notebook takes 57.3 degrees to the radian",
         what="thrust after the crack, lb/ft",
     )
 
@@ -80,7 +80,7 @@ def test_cohesive_soil_under_sloping_ground(agree: Agree) -> None:
 @pytest.mark.source(
     "DasGeotechnical",
     "published; Ex. 13.7, p. 459: Coulomb, φ′ 30°, wall friction 15°, ground 10°, 15 kN/m³, 4 m; the lean of "
-    "the face, 5°, is not in the transcription and was found from the printed coefficient",
+    "the face, 5°, is not in the companion notebook and was found from the printed coefficient",
 )
 def test_coulomb_thrust_behind_a_leaning_face(agree: Agree) -> None:
     K = active_coefficient_coulomb(degrees(30), degrees(15), degrees(10), degrees(5))

@@ -25,7 +25,7 @@ def test_inclined_gate(agree: Agree) -> None:
     "Fox",
     "from memory, to be confirmed; Ex. 3.7, p. 76: gate x = y²/4 of 5 m, 4 m of "
     "water, 999 kg/m³, held 5 m from its "
-    "hinge; the transcription prints 104.54 kN because it takes the integral's error "
+    "hinge; the companion notebook prints 104.54 kN because it takes the integral's error "
     "estimate for the integral",
 )
 def test_parabolic_gate(agree: Agree) -> None:

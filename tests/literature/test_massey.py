@@ -27,7 +27,7 @@ def test_two_liquids_on_a_disc(agree: Agree) -> None:
     "surface 1 m above its top; the "
     "printed prism (rectangle + sector − triangle) belongs to an arc whose upper edge "
     "is level with the centre; the "
-    "transcription calls the angle, which is in radians, degrees",
+    "companion notebook calls the angle, which is in radians, degrees",
 )
 def test_radial_gate(agree: Agree) -> None:
     arc = {"shape": "arc", "width": "5 m", "height": "2 m", "radius": "4 m", "centre": "protected"}

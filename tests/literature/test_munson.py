@@ -13,7 +13,7 @@ from tests.scenes import FOOT, POUND, arm, panel_under
 @pytest.mark.source(
     "Munson",
     "published; Ex. 2.6, p. 61: disc of 4 m at 60°, its middle 10 m deep, 9.80 kN/m³; "
-    "the transcription prints "
+    "the companion notebook prints "
     "1.23 kN for 1.23 MN",
 )
 def test_inclined_disc(agree: Agree) -> None:
@@ -28,7 +28,7 @@ def test_inclined_disc(agree: Agree) -> None:
     "Munson",
     "published; Ex. 2.7, p. 62: right triangle of 3 ft by 3 ft, its centroid 9 ft "
     "deep, 64.0 lb/ft³; the depth of "
-    "the centre of pressure is corrected, the transcription's 9.0 ft is an integer division",
+    "the centre of pressure is corrected, the companion notebook's 9.0 ft is an integer division",
 )
 def test_triangle(agree: Agree) -> None:
     corners = [["0 ft", "0 ft"], ["3 ft", "0 ft"], ["0 ft", "3 ft"]]

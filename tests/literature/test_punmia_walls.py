@@ -74,20 +74,22 @@ def test_base_without_tension_at_the_heel(
         middle = (low + high) / 2
         low, high = (middle, high) if built(middle).base.linear_heel[0] < 0 else (low, middle)
     why = (
-        "the transcription cuts the last digit off" if uplift == "linear" else "half a unit of the last digit"
+        "the companion notebook cuts the last digit off"
+        if uplift == "linear"
+        else "half a unit of the last digit"
     )
     agree(high, printed(width), abs=slack, why=why, what="width of the base, m")
     found = built(high)
     agree(found.base.linear_toe / 1e3, printed(stress), what="greatest stress, kPa")
     slack = 0.0054
-    why = "the transcription goes on with the rounded width"
+    why = "the companion notebook goes on with the rounded width"
     agree(found.sliding.factor, printed(factor), abs=slack, why=why, what="sliding factor")
 
 
 @pytest.mark.source(
     "PunmiaIrrigation",
     "published; Ex. 8.12, p. 417, corrected: 12 m, top 3 m, base 9 m, 21 kN/m³; printed 1.22 m, because the "
-    "transcription divides 3 by 2 as whole numbers",
+    "companion notebook divides 3 by 2 as whole numbers",
 )
 def test_height_of_a_shutter_without_tension(agree: Agree) -> None:
     body = {

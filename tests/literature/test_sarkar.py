@@ -30,7 +30,7 @@ def test_partly_wetted_wall(agree: Agree) -> None:
     "Sarkar",
     "published; Ex. 1.22, p. 27: upright disc of 2 m, upper edge 0.5 m deep; the "
     "depth of the centre of pressure is "
-    "corrected, the transcription's 1.54167 m leaves out the square of the diameter",
+    "corrected, the companion notebook's 1.54167 m leaves out the square of the diameter",
 )
 def test_upright_disc(agree: Agree) -> None:
     disc = {"shape": "circle", "bottom": "-2.5 m", "diameter": "2 m"}

@@ -33,7 +33,7 @@ def test_stresses_under_a_trapezoid(agree: Agree) -> None:
 
 @pytest.mark.source(
     "SarkarStrength",
-    "published; Ex. 14.4, p. 329, corrected: printed 500.62 kN, because the transcription squares the "
+    "published; Ex. 14.4, p. 329, corrected: printed 500.62 kN, because the companion notebook squares the "
     "unit weight "
     "in place of the weight",
 )
@@ -62,7 +62,7 @@ def test_water_on_a_battered_face(agree: Agree) -> None:
     "SarkarStrength",
     "published; Ex. 14.13, p. 341, corrected: 6 m, top 1 m, base 3 m, soil 18 kN/m³ at 20°, φ 30°, "
     "masonry 24 kN/m³; "
-    "the transcription takes the triangle at a wrong arm",
+    "the companion notebook takes the triangle at a wrong arm",
 )
 def test_masonry_wall_under_sloping_ground(agree: Agree) -> None:
     K = active_coefficient_rankine(np.radians([30.0]), np.radians([20.0]))

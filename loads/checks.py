@@ -95,6 +95,7 @@ def check_of(
     near: float,
     remarks: tuple[str, ...] = (),
     rises_with_water: bool = True,
+    grades_below: bool = True,
 ) -> Check:
     """Hold a demand's magnitude against a limit.
 
@@ -104,6 +105,8 @@ def check_of(
         Signed demand, shape (n,), in the SI unit of `kind`.
     limit
         As entered, or None. Of a limit of nothing any demand is beyond.
+    grades_below
+        As in `Check`.
     """
     value = limit.value if limit else float("nan")
     ratio = np.abs(demand) / value if value != 0 else np.where(demand != 0, np.inf, 0.0)
@@ -119,6 +122,7 @@ def check_of(
         source=source_text(limit),
         remarks=remarks,
         rises_with_water=rises_with_water,
+        grades_below=grades_below,
     )
 
 

@@ -265,7 +265,7 @@ def test_reverse_load_is_beyond_one_way_guides() -> None:
     forward = closure_under(FULL, flood_side="3 m")
     back = closure_under(FULL, flood_side="2 m", protected_side="2.4 m")
     name = "pressure toward the flood side"
-    assert check_of(forward.checks, name).verdict() == "below limit"
+    assert check_of(forward.checks, name).verdict() == "not checked"
     assert check_of(back.checks, name).verdict() == "above limit"
     assert any(remark.startswith("Reverse head") for remark in back.remarks)
     both_ways = closure_under(changed(FULL, guide=None), flood_side="2 m", protected_side="2.4 m")
@@ -304,7 +304,29 @@ def test_without_a_hold_down_light_logs_are_above_limit() -> None:
     assert check.verdict() == "above limit"
     assert check.source == "no hold-down entered"
     heavy = closure_under(changed(FULL, hold_down=None, log__weight="90 kg"), flood_side="3 m")
-    assert check_of(heavy.checks, "buoyancy on the hold-downs of a bay").verdict() == "below limit"
+    assert check_of(heavy.checks, "buoyancy on the hold-downs of a bay").verdict() == "not checked"
+
+
+def test_facts_of_the_build_alone_never_read_below_limit() -> None:
+    table = {
+        "id": "C",
+        "sill": "0 m",
+        "bays": 2,
+        "bay_width": "2 m",
+        "allowance": "0.1 m",
+        "guide": {"one_way": True},
+        "log": {
+            "height": "0.2 m",
+            "count": 10,
+            "bearing_length": "50 mm",
+            "weight": "90 kg",
+            "section": {"shape": "rectangle", "thickness": "60 mm"},
+        },
+    }
+    barrier = closure_under(table, flood_side="1 m")
+    names = {check.name for check in barrier.checks}
+    assert {"logs needed", "buoyancy on the hold-downs of a bay", "pressure toward the flood side"} <= names
+    assert barrier.verdict() == "not checked"
 
 
 def test_what_ifs() -> None:

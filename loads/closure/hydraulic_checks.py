@@ -73,6 +73,7 @@ def _on_hand(found: Hydraulics, demands: Demands, subject: str) -> Check:
         near=1.0,
         remarks=remarks,
         rises_with_water=False,
+        grades_below=False,
     )
 
 
@@ -90,6 +91,7 @@ def _buoyancy_check(hold_down: FloatArray, demands: Demands, subject: str, near:
         near=near,
         remarks=(ALL_ROUND,) if closure.hold_down else (NO_HOLD_DOWN, ALL_ROUND),
         rises_with_water=False,
+        grades_below=closure.hold_down is not None,
     )
 
 

@@ -70,4 +70,5 @@ def _reverse(closure: Closure, found: Pressed, near: float) -> Check:
         near=near,
         remarks=("The guides or seals bear one way only: any load the other way is beyond them.",),
         rises_with_water=False,
+        grades_below=False,
     )
